@@ -1,0 +1,82 @@
+import type { ConstantsSetName } from "../constants";
+
+/** Dark energy with w(a) = w0 + wa (1 - a) (Chevallier & Polarski 2001; Linder 2003). */
+export interface DarkEnergyGivens {
+  /** w0, the equation of state today; -1 by default. */
+  w0?: number;
+  /** wa, its change with 1 - a; 0 by default. */
+  wa?: number;
+}
+
+/** How a sum of neutrino masses is shared among the three. */
+export type NeutrinoOrdering = "oneMassive" | "degenerate" | "normal" | "inverted";
+
+/** Neutrinos: three species, massless or with exact Fermi-Dirac energy and pressure. */
+export interface NeutrinoGivens {
+  /** N_eff, the effective number of species while they were relativistic; 3.044 by default. */
+  effectiveNumber?: number;
+  /** Masses in eV, at most three; those left out or zero are massless. [0.06] by default. */
+  masses?: readonly number[];
+  /** Sum of the masses in eV, in place of `masses`. */
+  massSum?: number;
+  /** How `massSum` is shared; `oneMassive` by default. */
+  ordering?: NeutrinoOrdering;
+}
+
+/** How recombination is computed. */
+export type RecombinationTier = "saha" | "peebles" | "calibrated";
+
+/** Choices on which published numbers differ; every one is printed with every result. */
+export interface ConventionGivens {
+  /** CODATA set; `codata2022` by default. */
+  constants?: ConstantsSetName;
+  /** Whether radiation counts in closing the budget to one (`radiationInside`, default) or stands on top of it (`radiationOnTop`). */
+  closure?: "radiationInside" | "radiationOnTop";
+  /** Which matter defines equality: `baryonsAndCold` (default, as in the Planck tables) or `allMatter`, massive neutrinos included. */
+  equalityMatter?: "baryonsAndCold" | "allMatter";
+}
+
+/**
+ * A cosmological model as a notebook states it: a sufficient set of densities or fractions with hubble, the rest by default.
+ *
+ * Densities are omega = Omega h^2; fractions are Omega today. Matter includes massive neutrinos.
+ *
+ * @example const base: ModelGivens = { hubble: 67.4, baryonDensity: 0.0224, coldMatterDensity: 0.12 };
+ */
+export interface ModelGivens {
+  /** H0 in km/s/Mpc. */
+  hubble?: number;
+  /** h = H0/(100 km/s/Mpc), in place of hubble. */
+  reducedHubble?: number;
+  /** omega_b = Omega_b h^2. */
+  baryonDensity?: number;
+  /** Omega_b, in place of baryonDensity. */
+  baryonFraction?: number;
+  /** omega_c = Omega_c h^2. */
+  coldMatterDensity?: number;
+  /** Omega_c, in place of coldMatterDensity. */
+  coldMatterFraction?: number;
+  /** omega_m = Omega_m h^2: baryons, cold matter and massive neutrinos; in place of coldMatterDensity. */
+  matterDensity?: number;
+  /** Omega_m: baryons, cold matter and massive neutrinos; in place of coldMatterDensity. */
+  matterFraction?: number;
+  /** Omega_k; 0 by default. Positive is open, negative closed. */
+  curvature?: number;
+  /** omega_DE = Omega_DE h^2, in place of curvature. */
+  darkEnergyDensity?: number;
+  /** Omega_DE, in place of curvature. */
+  darkEnergyFraction?: number;
+  darkEnergy?: DarkEnergyGivens;
+  neutrinos?: NeutrinoGivens;
+  /** T_cmb today in K; 2.7255 by default. 0 leaves radiation and neutrinos out. */
+  photonTemperature?: number;
+  /** Y_p, helium's share of the baryonic mass, or `nucleosynthesis` (default): from omega_b and N_eff. */
+  helium?: number | "nucleosynthesis";
+  /** z_re, the middle of hydrogen's reionization; none by default. */
+  reionizationRedshift?: number;
+  /** tau, the optical depth of reionization, in place of reionizationRedshift. */
+  reionizationDepth?: number;
+  /** How recombination is computed; `calibrated` by default. */
+  recombination?: RecombinationTier;
+  conventions?: ConventionGivens;
+}

@@ -1,0 +1,13 @@
+export type { ClosedModel, ClosedNeutrinos } from "./closedModel";
+export { type ModelField, modelFieldByName, modelFields } from "./fields";
+export type {
+  ConventionGivens,
+  DarkEnergyGivens,
+  ModelGivens,
+  NeutrinoGivens,
+  NeutrinoOrdering,
+  RecombinationTier,
+} from "./givens";
+export { neutrinoMassesFromSum } from "./neutrinoMasses";
+export { hundredKmPerSecondPerMpc, photonDensity, unitDensity } from "./photonDensity";
+export { type FlatGivens, validateGivens } from "./validateGivens";

@@ -1,0 +1,153 @@
+import { DomainError } from "../errors";
+import type { SourceKey } from "../sources";
+import type { Evaluation } from "./evaluation";
+
+/** A value with the absolute numerical error of its computation. */
+export interface Computed {
+  readonly value: number;
+  /** Absolute, in the value's unit; not the uncertainty of the inputs. */
+  readonly error: number;
+}
+
+/** A statement on where a number stops being valid, shown with the result. */
+export interface ValidityNote {
+  /** `warning`: the number should not be used as it stands without thought; `note`: good to know. */
+  readonly level: "note" | "warning";
+  readonly text: string;
+}
+
+/** An argument of a quantity: z, t, d. */
+export interface QuantityArgument {
+  readonly name: string;
+  readonly symbol: string;
+  /** "" for a pure number. */
+  readonly unit: string;
+  /** The domain in words, as an error says it: "must be finite and above -1". */
+  readonly rule: string;
+  readonly accepts: (value: number) => boolean;
+}
+
+/** What a quantity is. Each room of `cosmo/` describes its own; the register collects them. */
+export interface Quantity<M> {
+  /** The name in the vocabulary: field, column, table row and record entry. */
+  readonly name: string;
+  /** The trade's symbol, with `_` before an index: "r_*". */
+  readonly symbol: string;
+  /** "" for a pure number. */
+  readonly unit: string;
+  readonly arguments: readonly QuantityArgument[];
+  /** Whether (z1, z2) is accepted in place of (z). */
+  readonly acceptsPair?: boolean;
+  /** One sentence. */
+  readonly description: string;
+  /** The defining equation, in LaTeX. */
+  readonly equation: string;
+  /** How it is computed, in one sentence. */
+  readonly method: string;
+  /** Stated bound on the relative numerical error, enforced by tests. */
+  readonly accuracy: number;
+  readonly sources: readonly SourceKey[] | ((model: M) => readonly SourceKey[]);
+  /**
+   * True where the number hangs on an integrated ionization history: its error is then measured against the evaluation at
+   * coarser settings.
+   */
+  readonly usesHistory?: boolean;
+  readonly notes?: (evaluation: Evaluation<M>, values: readonly number[]) => readonly ValidityNote[];
+  readonly compute: (evaluation: Evaluation<M>, values: readonly number[]) => Computed;
+}
+
+/** A number that can say where it came from. */
+export interface QuantityValue {
+  readonly name: string;
+  readonly symbol: string;
+  readonly unit: string;
+  readonly arguments: readonly number[];
+  readonly value: number;
+  /** Absolute numerical error estimate. */
+  readonly error: number;
+  readonly method: string;
+  readonly sources: readonly SourceKey[];
+  readonly notes: readonly ValidityNote[];
+}
+
+/** The redshift argument that most quantities share. */
+export const redshiftArgument: QuantityArgument = {
+  name: "z",
+  symbol: "z",
+  unit: "",
+  rule: "must be finite and above -1",
+  accepts: (z) => z > -1 && Number.isFinite(z),
+};
+
+/** A redshift at which the past is asked for: 0 or more. */
+export const pastRedshiftArgument: QuantityArgument = {
+  name: "z",
+  symbol: "z",
+  unit: "",
+  rule: "must be finite and not negative",
+  accepts: (z) => z >= 0 && Number.isFinite(z),
+};
+
+/** Refuses arguments outside the quantity's domain, by name, place and rule. */
+export function checkArguments<M>(definition: Quantity<M>, values: readonly number[], place?: string): void {
+  const expected = definition.arguments.length;
+  const pair = definition.acceptsPair === true && values.length === 2 && expected === 1;
+  if (values.length !== expected && !pair) {
+    const names = definition.arguments.map((argument) => argument.name).join(", ");
+    throw new DomainError({
+      where: definition.name,
+      argument: "arguments",
+      rule: expected === 0 ? "must be left out" : `must be (${names})${definition.acceptsPair ? " or (z1, z2)" : ""}`,
+      value: values,
+      place,
+    });
+  }
+  values.forEach((value, index) => {
+    const argument = definition.arguments[pair ? 0 : index]!;
+    if (typeof value !== "number" || !argument.accepts(value)) {
+      const name = argument.name === "z" ? (pair ? `redshift z${index + 1}` : "redshift") : argument.name;
+      throw new DomainError({ where: definition.name, argument: name, rule: argument.rule, value, place });
+    }
+  });
+}
+
+/**
+ * Evaluates a quantity with its error, sources and notes.
+ *
+ * Throws {@link DomainError} for arguments outside the domain, and whatever error the computation meets; a result that is
+ * not a finite number is refused here, so that NaN never passes.
+ */
+export function evaluateQuantity<M>(
+  definition: Quantity<M>,
+  evaluation: Evaluation<M>,
+  values: readonly number[] = [],
+  place?: string,
+): QuantityValue {
+  checkArguments(definition, values, place);
+  const computed = definition.compute(evaluation, values);
+  if (!Number.isFinite(computed.value)) {
+    throw new DomainError({
+      where: definition.name,
+      argument: "result",
+      rule: "must be a finite number; this model has none at these arguments",
+      value: computed.value,
+      place,
+    });
+  }
+  let error = Math.abs(computed.error);
+  if (definition.usesHistory === true && evaluation.precision === "full") {
+    error += Math.abs(computed.value - definition.compute(evaluation.coarse(), values).value);
+  }
+  const rounding = 4 * Number.EPSILON * Math.abs(computed.value);
+  return {
+    name: definition.name,
+    symbol: definition.symbol,
+    unit: definition.unit,
+    arguments: [...values],
+    value: computed.value,
+    error: Math.max(error, rounding),
+    method: definition.method,
+    sources: typeof definition.sources === "function" ? definition.sources(evaluation.model) : definition.sources,
+    notes: definition.notes?.(evaluation, values) ?? [],
+  };
+}
