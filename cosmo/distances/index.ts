@@ -1,0 +1,1 @@
+export { comovingDistance, comovingDistanceQuantity, redshiftPair, unitHubbleDistance } from "./comovingDistance";

@@ -1,0 +1,129 @@
+import type { ClosedModel } from "../model";
+import { findMinimum, findRoot } from "../numerics";
+import type { Evaluation, Part, Quantity } from "../quantity";
+import { darkEnergyGrowth } from "./darkEnergyGrowth";
+import { fermiDiracEnergy, fermiDiracPressure } from "./fermiDirac";
+import { massToTemperature } from "./neutrinoDensity";
+
+/** An evaluation of one closed model: what every quantity of `cosmo/` is computed from. */
+export type ModelEvaluation = Evaluation<ClosedModel>;
+
+/** A part of the evaluation of a closed model. */
+export type ModelPart<T> = Part<ClosedModel, T>;
+
+/** A quantity of a closed model. */
+export type ModelQuantity = Quantity<ClosedModel>;
+
+/**
+ * The expansion of one model, in units of 100 km/s/Mpc so that densities stand as omega = Omega h^2.
+ *
+ * (H/100)^2 = omega_cb a^-3 + omega_r a^-4 + omega_nu(a) + omega_k a^-2 + omega_DE f(a). Written with a^4 taken out, every term
+ * stays finite as a goes to 0.
+ */
+export class Expansion {
+  readonly baryonsAndCold: number;
+  readonly radiation: number;
+  readonly curvatureDensity: number;
+  readonly darkEnergy: number;
+  private readonly w0: number;
+  private readonly wa: number;
+  private readonly speciesDensity: number;
+  /** y = m c^2/(k T_nu) today, one a massive species. */
+  private readonly massRatios: readonly number[];
+
+  constructor(model: ClosedModel) {
+    this.baryonsAndCold = model.baryonDensity + model.coldMatterDensity;
+    this.radiation = model.radiationDensity;
+    this.curvatureDensity = model.curvature * model.reducedHubble ** 2;
+    this.darkEnergy = model.darkEnergyDensity;
+    this.w0 = model.darkEnergy.w0;
+    this.wa = model.darkEnergy.wa;
+    this.speciesDensity = model.neutrinos.masslessSpeciesDensity;
+    const temperature = model.neutrinos.temperature;
+    this.massRatios =
+      temperature > 0
+        ? model.neutrinos.masses.map((mass) => massToTemperature(mass, temperature, model.constants))
+        : [];
+  }
+
+  /** omega_nu(a) a^4 of the massive species. */
+  neutrinoTerm(a: number): number {
+    let sum = 0;
+    for (const ratio of this.massRatios) sum += this.speciesDensity * fermiDiracEnergy(ratio * a);
+    return sum;
+  }
+
+  /** 3 P_nu(a) a^4 of the massive species, in the units of {@link neutrinoTerm}. */
+  neutrinoPressureTerm(a: number): number {
+    let sum = 0;
+    for (const ratio of this.massRatios) sum += this.speciesDensity * fermiDiracPressure(ratio * a);
+    return sum;
+  }
+
+  /** omega_DE f(a) a^4. */
+  darkEnergyTerm(a: number): number {
+    return this.darkEnergy === 0 ? 0 : this.darkEnergy * darkEnergyGrowth(a, this.w0, this.wa) * a ** 4;
+  }
+
+  /** a^4 (H/100 km/s/Mpc)^2; negative where a closed model has no such a. */
+  squaredTerm(a: number): number {
+    return (
+      this.radiation +
+      this.neutrinoTerm(a) +
+      a * (this.baryonsAndCold + a * this.curvatureDensity) +
+      this.darkEnergyTerm(a)
+    );
+  }
+
+  /** H in units of 100 km/s/Mpc at scale factor a; NaN where the model has no such a. */
+  rate(a: number): number {
+    return Math.sqrt(this.squaredTerm(a)) / (a * a);
+  }
+
+  /** w of the dark energy at scale factor a. */
+  equationOfState(a: number): number {
+    return this.w0 + this.wa * (1 - a);
+  }
+}
+
+/** The expansion of the model. */
+export const expansionPart: ModelPart<Expansion> = {
+  name: "expansion",
+  compute: (evaluation) => new Expansion(evaluation.model),
+};
+
+/**
+ * The redshift beyond which the model does not exist (H = 0 there: a closed model that bounced), or undefined when it
+ * reaches back to a Big Bang.
+ *
+ * Method: where every term is positive there is nothing to look for; otherwise a^4 H^2 is scanned over 600 points in ln a from
+ * 1e-8 to 1, its lowest point refined, and the zero nearest to today found by Brent's method.
+ */
+export const turningRedshiftPart: ModelPart<number | undefined> = {
+  name: "turning redshift",
+  compute: (evaluation) => {
+    const expansion = evaluation.once(expansionPart);
+    if (expansion.curvatureDensity >= 0 && expansion.darkEnergy >= 0) return undefined;
+    const points = 600;
+    const lowest = Math.log(1e-8);
+    const term = (s: number) => expansion.squaredTerm(Math.exp(s));
+    const scaled = (s: number) => term(s) * Math.exp(-2 * s);
+    let nearestRoot: number | undefined;
+    let above = 0;
+    for (let i = 1; i <= points && nearestRoot === undefined; i++) {
+      const s = (lowest * i) / points;
+      if (term(s) <= 0) {
+        nearestRoot = findRoot(term, s, above).value;
+      } else if (i > 1) {
+        const middle = (lowest * (i - 1)) / points;
+        const before = (lowest * (i - 2)) / points;
+        if (scaled(middle) < scaled(s) && scaled(middle) < scaled(before)) {
+          const bottom = findMinimum(scaled, s, before);
+          if (bottom.minimum <= 0) nearestRoot = findRoot(term, bottom.value, before).value;
+        }
+      }
+      above = s;
+    }
+    return nearestRoot === undefined ? undefined : Math.expm1(-nearestRoot);
+  },
+};

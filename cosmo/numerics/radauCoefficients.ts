@@ -1,0 +1,150 @@
+import { gaussLegendre } from "./gaussLegendre";
+
+/**
+ * Radau IIA with five stages: collocation at the right Radau points, order 9, stage order 5, L-stable.
+ *
+ * Sources: Hairer & Wanner 1996, Solving Ordinary Differential Equations II, IV.5 (the methods), IV.8 (the transformation
+ * of the linear systems and the embedded formula); Hairer & Wanner 1999, J. Comput. Appl. Math. 111, 93 (five stages).
+ * The digits follow from the definition by test/reference/numerics/radau.py with 60 digits, rounded to the nearest double.
+ */
+
+/** Number of stages. */
+export const STAGES = 5;
+
+/** Nodes c_i on (0, 1]: the roots of P_5 - P_4, shifted. */
+export const nodes = Float64Array.of(
+  0.05710419611451768,
+  0.2768430136381238,
+  0.5835904323689168,
+  0.8602401356562195,
+  1,
+);
+
+/** The real eigenvalue gamma of the inverse of the Runge-Kutta matrix A. */
+export const realEigenvalue = 6.2867047517292765;
+
+/** The two pairs alpha +- i beta of complex eigenvalues of the inverse of A. */
+export const complexEigenvalues = [
+  { alpha: 5.70095329867179, beta: 3.2102656003085497 },
+  { alpha: 3.655694325463572, beta: 6.543736899360077 },
+] as const;
+
+/**
+ * T of A^-1 = T L T^-1, row by row, with L = blockdiag(gamma, [[alpha, beta], [-beta, alpha]], ...): the real
+ * eigenvector, then real and imaginary part of one eigenvector a pair, last components 1.
+ */
+// biome-ignore format: a matrix
+export const transformation = Float64Array.of(
+  0.013576867344947943, -0.011478515255229515, 0.01401985889287541, -0.010242047817908826, -0.04767387729029572,
+  0.0016179004017190875, -0.007668830749180163, -0.024708578426518527, 0.05017286451737106, 0.09433181918161143,
+  0.07915785334744721, 0.01939846399882895, -0.08180035370375117, -0.23053953404341795, -0.1027030453801259,
+  0.41225608268046143, 0.40760117128019907, -0.19968242788680252, 0.37789390224886127, -0.46674413033249434,
+  1, 1, 0, 1, 0,
+);
+
+/** T^-1, row by row. */
+// biome-ignore format: a matrix
+export const inverseTransformation = Float64Array.of(
+  27.697693775684087, 12.783337911304406, 3.20848938671343, -0.9514904122489162, 0.7415504960259897,
+  -33.041880213519, -17.376953479063566, -0.17212906325400557, -0.09916977798254265, 0.5312281158383066,
+  8.611443979875292, -9.699991409528808, -1.9147286396968743, -2.41869200608494, 1.0474634879353375,
+  5.344186437834912, 4.593615567759161, -3.0363603234594243, 1.050660190231459, -0.27277861186429625,
+  -3.748059807439805, 3.984965736343885, 1.0444156416080188, -1.1840985681379486, 0.44991777015678036,
+);
+
+/** The nodes with the start of the step put first: 0, c_1 ... c_5. */
+const points = [0, ...nodes];
+
+/**
+ * Weights L_i(tau), i = 1..5, of the stage increments Z_i = Y_i - y_0 in the polynomial of degree 5 through the start
+ * value and the stages: u(tau) = y_0 + sum_i L_i(tau) Z_i.
+ *
+ * @param tau - position in the step, 0 at its start, 1 at its end; other values extrapolate
+ * @param out - receives the five weights
+ */
+export function stageWeights(tau: number, out: Float64Array): void {
+  for (let i = 1; i <= STAGES; i++) {
+    let product = inverseDenominators[i];
+    for (let j = 0; j <= STAGES; j++) if (j !== i) product *= tau - points[j];
+    out[i - 1] = product;
+  }
+}
+
+const inverseDenominators = points.map((p, i) => points.reduce((d, q, j) => (j === i ? d : d / (p - q)), 1));
+
+/** Derivatives L_i'(0): they give h u'(0) from the stage increments. */
+export const startSlopeWeights = slopeWeights(0);
+
+/** Derivatives L_i'(1): they give h u'(1) = h f(y_1). */
+export const endSlopeWeights = slopeWeights(1);
+
+function slopeWeights(tau: number): Float64Array {
+  const out = new Float64Array(STAGES);
+  for (let i = 1; i <= STAGES; i++) {
+    let sum = 0;
+    for (let k = 0; k <= STAGES; k++) {
+      if (k === i) continue;
+      let product = inverseDenominators[i];
+      for (let j = 0; j <= STAGES; j++) if (j !== i && j !== k) product *= tau - points[j];
+      sum += product;
+    }
+    out[i - 1] = sum;
+  }
+  return out;
+}
+
+/** Value at 0 of the monic polynomial M with the roots c_i: minus the product of the nodes. */
+const startValue = -nodes.reduce((product, c) => product * c, 1);
+
+/**
+ * The correction Q(tau) = int_0^tau M(s) ds / M(0), M the monic polynomial with the roots c_i. It vanishes at both ends,
+ * its slope is 1 at the start and 0 at the nodes: adding it turns u into the polynomial of degree 6 whose slope agrees
+ * with f at the start too.
+ */
+export function slopeCorrection(tau: number): number {
+  let sum = 0;
+  for (let k = correctionCoefficients.length - 1; k >= 0; k--) sum = sum * tau + correctionCoefficients[k];
+  return sum * tau * (1 - tau);
+}
+
+/** Q(tau) / (tau (1 - tau)) in powers of tau. */
+const correctionCoefficients = quotientCoefficients();
+
+function quotientCoefficients(): Float64Array {
+  let monic = [1];
+  for (const c of nodes) {
+    const next = new Array<number>(monic.length + 1).fill(0);
+    for (let k = 0; k < monic.length; k++) {
+      next[k] -= c * monic[k];
+      next[k + 1] += monic[k];
+    }
+    monic = next;
+  }
+  // Q / tau = sum_k m_k tau^k / (k + 1) / M(0); division by 1 - tau sums the coefficients from the bottom.
+  const out = new Float64Array(STAGES);
+  let sum = 0;
+  for (let k = 0; k < STAGES; k++) {
+    sum += monic[k] / (k + 1) / startValue;
+    out[k] = sum;
+  }
+  return out;
+}
+
+/** The Runge-Kutta matrix A, row by row: a_ij = int_0^c_i l_j(t) dt, l_j the Lagrange polynomial of node j. */
+export function rungeKuttaMatrix(): Float64Array {
+  const { nodes: gauss, weights } = gaussLegendre(3);
+  const out = new Float64Array(STAGES * STAGES);
+  for (let i = 0; i < STAGES; i++) {
+    for (let j = 0; j < STAGES; j++) {
+      let sum = 0;
+      for (let g = 0; g < gauss.length; g++) {
+        const t = 0.5 * nodes[i] * (1 + gauss[g]);
+        let product = 1;
+        for (let m = 0; m < STAGES; m++) if (m !== j) product *= (t - nodes[m]) / (nodes[j] - nodes[m]);
+        sum += weights[g] * product;
+      }
+      out[i * STAGES + j] = 0.5 * nodes[i] * sum;
+    }
+  }
+  return out;
+}

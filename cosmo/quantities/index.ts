@@ -1,0 +1,1 @@
+export { findQuantity, quantityRegister } from "./register";

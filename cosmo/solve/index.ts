@@ -1,0 +1,1 @@
+export { closeModel, type Origin } from "./closeModel";

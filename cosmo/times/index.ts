@@ -1,0 +1,1 @@
+export { ageAt, ageAtQuantity, ageQuantity, unitHubbleTime } from "./age";
