@@ -1,0 +1,18 @@
+/** Contents: the charts of a cell's output. */
+export type { ChartAxis } from "./chart/axis";
+export { type Chart, type VegaLiteSpec, vegaLiteMediaType } from "./chart/chart";
+export type { ChartBand, ChartRule } from "./chart/guides";
+export {
+  type IntervalChartOptions,
+  type IntervalPanel,
+  type IntervalRow,
+  intervalChart,
+} from "./chart/intervalChart";
+export {
+  type ChartPanel,
+  type LineChartOptions,
+  type LineSeries,
+  lineChart,
+  type PointSeries,
+} from "./chart/lineChart";
+export { type RenderOptions, renderSvg } from "./chart/renderSvg";

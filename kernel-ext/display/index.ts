@@ -1,0 +1,33 @@
+/** Contents of the display room. */
+export { type CellOutputOptions, CellResult, cellOutput, type SourceLine } from "./bundle";
+export {
+  type Chart,
+  type ChartAxis,
+  type ChartBand,
+  type ChartPanel,
+  type ChartRule,
+  type IntervalChartOptions,
+  type IntervalPanel,
+  type IntervalRow,
+  intervalChart,
+  type LineChartOptions,
+  type LineSeries,
+  lineChart,
+  type PointSeries,
+  type RenderOptions,
+  renderSvg,
+  type VegaLiteSpec,
+} from "./chart";
+export { formatNumber, formatWithError, missingMark, type NumberFormat } from "./digits";
+export { escapeHtml, escapeMarkdown, visibleText } from "./escape";
+export { type Progress, type ProgressOptions, progress } from "./progress";
+export {
+  type Displayable,
+  type DisplaySink,
+  displaySink,
+  displaySymbol,
+  type MimeBundle,
+  setDisplaySink,
+} from "./sink";
+export { quantityText, symbolHtml, symbolText } from "./symbol";
+export { type Table, type TableColumn, type TableOptions, type TableRow, type TableValue, table } from "./table";
