@@ -1,3 +1,5 @@
+export type { ChebyshevOptions } from "./chebyshev";
+export { buildChebyshev, PiecewiseChebyshev } from "./chebyshev";
 export type { FindMinimumOptions, MinimumResult } from "./findMinimum";
 export { findMinimum } from "./findMinimum";
 export type { FindRootOptions } from "./findRoot";
@@ -7,3 +9,6 @@ export { gaussLegendre } from "./gaussLegendre";
 export type { IntegrateOptions } from "./integrate";
 export { integrate } from "./integrate";
 export type { NumericalResult } from "./numericalResult";
+export type { StiffOptions, StiffSystem } from "./stiff";
+export { solveStiff } from "./stiff";
+export type { StiffSolution } from "./stiffSolution";

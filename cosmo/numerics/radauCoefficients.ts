@@ -1,5 +1,3 @@
-import { gaussLegendre } from "./gaussLegendre";
-
 /**
  * Radau IIA with five stages: collocation at the right Radau points, order 9, stage order 5, L-stable.
  *
@@ -53,7 +51,10 @@ export const inverseTransformation = Float64Array.of(
 );
 
 /** The nodes with the start of the step put first: 0, c_1 ... c_5. */
-const points = [0, ...nodes];
+const points = Float64Array.of(0, ...nodes);
+
+/** 1 / prod_(j != i) (p_i - p_j). */
+const inverseDenominators = points.map((p, i) => points.reduce((d, q, j) => (j === i ? d : d / (p - q)), 1));
 
 /**
  * Weights L_i(tau), i = 1..5, of the stage increments Z_i = Y_i - y_0 in the polynomial of degree 5 through the start
@@ -63,14 +64,18 @@ const points = [0, ...nodes];
  * @param out - receives the five weights
  */
 export function stageWeights(tau: number, out: Float64Array): void {
+  // Products of the distances from the left, then from the right: one pass each way.
+  let product = tau;
   for (let i = 1; i <= STAGES; i++) {
-    let product = inverseDenominators[i];
-    for (let j = 0; j <= STAGES; j++) if (j !== i) product *= tau - points[j];
-    out[i - 1] = product;
+    out[i - 1] = product * inverseDenominators[i];
+    product *= tau - points[i];
+  }
+  product = 1;
+  for (let i = STAGES; i >= 1; i--) {
+    out[i - 1] *= product;
+    product *= tau - points[i];
   }
 }
-
-const inverseDenominators = points.map((p, i) => points.reduce((d, q, j) => (j === i ? d : d / (p - q)), 1));
 
 /** Derivatives L_i'(0): they give h u'(0) from the stage increments. */
 export const startSlopeWeights = slopeWeights(0);
@@ -81,31 +86,18 @@ export const endSlopeWeights = slopeWeights(1);
 function slopeWeights(tau: number): Float64Array {
   const out = new Float64Array(STAGES);
   for (let i = 1; i <= STAGES; i++) {
-    let sum = 0;
     for (let k = 0; k <= STAGES; k++) {
       if (k === i) continue;
       let product = inverseDenominators[i];
       for (let j = 0; j <= STAGES; j++) if (j !== i && j !== k) product *= tau - points[j];
-      sum += product;
+      out[i - 1] += product;
     }
-    out[i - 1] = sum;
   }
   return out;
 }
 
 /** Value at 0 of the monic polynomial M with the roots c_i: minus the product of the nodes. */
 const startValue = -nodes.reduce((product, c) => product * c, 1);
-
-/**
- * The correction Q(tau) = int_0^tau M(s) ds / M(0), M the monic polynomial with the roots c_i. It vanishes at both ends,
- * its slope is 1 at the start and 0 at the nodes: adding it turns u into the polynomial of degree 6 whose slope agrees
- * with f at the start too.
- */
-export function slopeCorrection(tau: number): number {
-  let sum = 0;
-  for (let k = correctionCoefficients.length - 1; k >= 0; k--) sum = sum * tau + correctionCoefficients[k];
-  return sum * tau * (1 - tau);
-}
 
 /** Q(tau) / (tau (1 - tau)) in powers of tau. */
 const correctionCoefficients = quotientCoefficients();
@@ -130,21 +122,13 @@ function quotientCoefficients(): Float64Array {
   return out;
 }
 
-/** The Runge-Kutta matrix A, row by row: a_ij = int_0^c_i l_j(t) dt, l_j the Lagrange polynomial of node j. */
-export function rungeKuttaMatrix(): Float64Array {
-  const { nodes: gauss, weights } = gaussLegendre(3);
-  const out = new Float64Array(STAGES * STAGES);
-  for (let i = 0; i < STAGES; i++) {
-    for (let j = 0; j < STAGES; j++) {
-      let sum = 0;
-      for (let g = 0; g < gauss.length; g++) {
-        const t = 0.5 * nodes[i] * (1 + gauss[g]);
-        let product = 1;
-        for (let m = 0; m < STAGES; m++) if (m !== j) product *= (t - nodes[m]) / (nodes[j] - nodes[m]);
-        sum += weights[g] * product;
-      }
-      out[i * STAGES + j] = 0.5 * nodes[i] * sum;
-    }
-  }
-  return out;
+/**
+ * The correction Q(tau) = int_0^tau M(s) ds / M(0), M the monic polynomial with the roots c_i. It vanishes at both ends,
+ * its slope is 1 at the start and 0 at the nodes: adding it turns u into the polynomial of degree 6 whose slope agrees
+ * with f at the start too.
+ */
+export function slopeCorrection(tau: number): number {
+  let sum = 0;
+  for (let k = correctionCoefficients.length - 1; k >= 0; k--) sum = sum * tau + correctionCoefficients[k];
+  return sum * tau * (1 - tau);
 }

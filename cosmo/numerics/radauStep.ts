@@ -1,0 +1,348 @@
+import { NotConvergedError } from "../errors";
+import { factorComplex, factorReal, solveComplex, solveReal } from "./luDecomposition";
+import {
+  complexEigenvalues,
+  inverseTransformation,
+  nodes,
+  realEigenvalue,
+  STAGES,
+  stageWeights,
+  startSlopeWeights,
+  transformation,
+} from "./radauCoefficients";
+import type { StiffSystem } from "./stiff";
+import type { StepRecord } from "./stiffSolution";
+
+const MAXIMUM_ITERATIONS = 12;
+/** Below this rate of convergence the Jacobian is kept for the next step. */
+const KEEP_JACOBIAN = 1e-3;
+/** Newton's iteration stops at this part of the tolerance. */
+const NEWTON_PART = 0.02;
+/**
+ * The embedded formula has a local error e ~ h^6 where the method has ~ h^10. With the largest increment d ~ h over the
+ * step the method's error is K e (e/d)^0.8. K = 2 for an exponential (error constants 1.05e-5 and 2.2e-9); derivatives
+ * that grow like k!, as near a pole, give 52.
+ */
+const MESH_FACTOR = 20;
+/** Largest error of the polynomial between mesh points over the embedded error. */
+const INTERIOR_FACTOR = 0.1;
+
+/**
+ * One step of the five-stage Radau IIA method: stages by simplified Newton iteration, error estimate, acceptance.
+ * All memory is taken at construction; nothing is allocated in a step.
+ */
+export class RadauStep {
+  /** Where the integration stands. */
+  t: number;
+  readonly y: Float64Array;
+  evaluations = 0;
+  /** Newton iterations of the last attempt. */
+  iterations = 0;
+  /** By how much to shorten the step after a failed attempt. */
+  reduction = 0.5;
+
+  private readonly n: number;
+  private readonly slope: Float64Array;
+  private readonly jacobian: Float64Array;
+  private jacobianIsFresh = false;
+  private factoredStep = 0;
+  private contraction = 1;
+  private rate = 1;
+  private readonly real: Float64Array;
+  private readonly complexRe: Float64Array[];
+  private readonly complexIm: Float64Array[];
+  private readonly pivots: Int32Array[];
+  /** Stage increments, stage by stage, and the same times T^-1. */
+  private readonly z: Float64Array;
+  private readonly w: Float64Array;
+  /** f at the stages; the right-hand sides and then the changes of w. */
+  private readonly stageSlopes: Float64Array[];
+  private readonly change: Float64Array[];
+  private readonly point: Float64Array;
+  private readonly tolerance: Float64Array;
+  private readonly errors: Float64Array;
+  private readonly meshErrors: Float64Array;
+  /** Stage increments of the step before, for the start values. */
+  private readonly zBefore: Float64Array;
+  private stepBefore = 0;
+  private readonly weights = new Float64Array(STAGES);
+
+  constructor(
+    private readonly system: StiffSystem,
+    start: number,
+    initial: Float64Array,
+    private readonly absolute: Float64Array,
+    private readonly relative: number,
+    private readonly interior: number,
+  ) {
+    const n = initial.length;
+    const vectors = () => Array.from({ length: STAGES }, () => new Float64Array(n));
+    this.n = n;
+    this.t = start;
+    this.y = Float64Array.from(initial);
+    this.slope = new Float64Array(n);
+    this.jacobian = new Float64Array(n * n);
+    this.real = new Float64Array(n * n);
+    this.complexRe = [new Float64Array(n * n), new Float64Array(n * n)];
+    this.complexIm = [new Float64Array(n * n), new Float64Array(n * n)];
+    this.pivots = [new Int32Array(n), new Int32Array(n), new Int32Array(n)];
+    this.z = new Float64Array(STAGES * n);
+    this.w = new Float64Array(STAGES * n);
+    this.zBefore = new Float64Array(STAGES * n);
+    this.stageSlopes = vectors();
+    this.change = vectors();
+    this.point = new Float64Array(n);
+    this.tolerance = new Float64Array(n);
+    this.errors = new Float64Array(n);
+    this.meshErrors = new Float64Array(n);
+    if (!this.refreshSlope()) {
+      throw new NotConvergedError({
+        where: "solveStiff",
+        reason: `the derivative is not finite at the start, t = ${start}: [${Array.from(this.slope).join(", ")}]`,
+        value: start,
+      });
+    }
+  }
+
+  /** f and the tolerances at (t, y); false if f is not finite. */
+  private refreshSlope(): boolean {
+    const { n, y, slope, tolerance } = this;
+    this.system.derivative(this.t, y, slope);
+    this.evaluations++;
+    let finite = true;
+    for (let c = 0; c < n; c++) {
+      tolerance[c] = this.absolute[c] + this.relative * Math.abs(y[c]);
+      finite = finite && Number.isFinite(slope[c]);
+    }
+    return finite;
+  }
+
+  /** The Jacobian by forward differences. */
+  private linearize(): void {
+    const { n, y, point, slope, jacobian, absolute } = this;
+    const shifted = this.change[0];
+    point.set(y);
+    for (let j = 0; j < n; j++) {
+      // The absolute tolerance is what the caller holds for small in this component.
+      const increment = Math.max(Math.sqrt(Number.EPSILON) * Math.abs(y[j]), absolute[j]);
+      point[j] = y[j] + increment;
+      const exact = point[j] - y[j];
+      this.system.derivative(this.t, point, shifted);
+      for (let i = 0; i < n; i++) jacobian[i * n + j] = (shifted[i] - slope[i]) / exact;
+      point[j] = y[j];
+    }
+    this.evaluations += n;
+    this.jacobianIsFresh = true;
+    this.factoredStep = 0;
+  }
+
+  /** Factors gamma/h I - J and (alpha - i beta)/h I - J. */
+  private factor(h: number): boolean {
+    const { n, real, jacobian } = this;
+    for (let k = 0; k < n * n; k++) real[k] = -jacobian[k];
+    for (let k = 0; k < n; k++) real[k * n + k] += realEigenvalue / h;
+    if (!factorReal(real, n, this.pivots[0])) return false;
+    for (let p = 0; p < 2; p++) {
+      const re = this.complexRe[p];
+      const im = this.complexIm[p];
+      const { alpha, beta } = complexEigenvalues[p];
+      for (let k = 0; k < n * n; k++) {
+        re[k] = -jacobian[k];
+        im[k] = 0;
+      }
+      for (let k = 0; k < n; k++) {
+        re[k * n + k] += alpha / h;
+        im[k * n + k] = -beta / h;
+      }
+      if (!factorComplex(re, im, n, this.pivots[1 + p])) return false;
+    }
+    this.factoredStep = h;
+    return true;
+  }
+
+  /** Start values of the stages: the polynomial of the step before goes on. */
+  private predict(h: number): void {
+    const { n, z, w, zBefore, weights, stepBefore } = this;
+    const ratio = h / stepBefore;
+    if (stepBefore === 0 || ratio > 5) {
+      z.fill(0);
+      w.fill(0);
+      return;
+    }
+    for (let i = 0; i < STAGES; i++) {
+      stageWeights(1 + nodes[i] * ratio, weights);
+      for (let c = 0; c < n; c++) {
+        let sum = -zBefore[(STAGES - 1) * n + c];
+        for (let j = 0; j < STAGES; j++) sum += weights[j] * zBefore[j * n + c];
+        z[i * n + c] = sum;
+      }
+    }
+    for (let c = 0; c < n; c++) {
+      for (let i = 0; i < STAGES; i++) {
+        let sum = 0;
+        for (let j = 0; j < STAGES; j++) sum += inverseTransformation[i * STAGES + j] * z[j * n + c];
+        w[i * n + c] = sum;
+      }
+    }
+  }
+
+  /** Finds the stages of a step of size h; false if Newton's iteration does not converge (see `reduction`). */
+  attempt(h: number): boolean {
+    if (!this.jacobianIsFresh && !(this.rate <= KEEP_JACOBIAN)) this.linearize();
+    this.reduction = 0.5;
+    for (;;) {
+      if ((this.factoredStep === h || this.factor(h)) && this.iterate(h)) return true;
+      if (this.jacobianIsFresh) {
+        this.rate = 1;
+        return false;
+      }
+      this.linearize();
+    }
+  }
+
+  private iterate(h: number): boolean {
+    const { n, t, y, z, w, stageSlopes, change, point, tolerance } = this;
+    this.predict(h);
+    let eta = Math.max(this.contraction, Number.EPSILON) ** 0.8;
+    let normBefore = 0;
+    let ratioBefore = 0;
+    for (let iteration = 1; iteration <= MAXIMUM_ITERATIONS; iteration++) {
+      this.iterations = iteration;
+      for (let i = 0; i < STAGES; i++) {
+        const slopes = stageSlopes[i];
+        for (let c = 0; c < n; c++) point[c] = y[c] + z[i * n + c];
+        this.system.derivative(t + nodes[i] * h, point, slopes);
+        this.evaluations++;
+        for (let c = 0; c < n; c++) if (!Number.isFinite(slopes[c])) return false;
+      }
+      this.solveForChange(h);
+      let norm = 0;
+      for (let c = 0; c < n; c++) {
+        const scale = Math.max(NEWTON_PART * tolerance[c], 8 * Number.EPSILON * Math.abs(y[c]));
+        for (let i = 0; i < STAGES; i++) {
+          let sum = 0;
+          for (let j = 0; j < STAGES; j++) sum += transformation[i * STAGES + j] * change[j][c];
+          z[i * n + c] += sum;
+          w[i * n + c] += change[i][c];
+          norm = Math.max(norm, Math.abs(sum) / scale);
+        }
+      }
+      if (!(norm < Number.POSITIVE_INFINITY)) return false;
+      if (iteration > 1) {
+        const ratio = norm / normBefore;
+        const rate = iteration === 2 ? ratio : Math.sqrt(ratio * ratioBefore);
+        ratioBefore = ratio;
+        this.rate = rate;
+        if (!(rate < 0.99)) {
+          // At the level of round-off the changes no longer shrink.
+          if (norm <= 1) return true;
+          return false;
+        }
+        eta = rate / (1 - rate);
+        const predicted = (eta * norm * rate ** (MAXIMUM_ITERATIONS - iteration)) as number;
+        if (predicted > 1) {
+          this.reduction = 0.8 * Math.max(1e-4, Math.min(20, predicted)) ** (-1 / (4 + MAXIMUM_ITERATIONS - iteration));
+          return false;
+        }
+      }
+      normBefore = norm;
+      if (eta * norm <= 1) {
+        this.contraction = eta;
+        return true;
+      }
+    }
+    return false;
+  }
+
+  /** One linear solve of the simplified Newton iteration, in the transformed variables; the result is in `change`. */
+  private solveForChange(h: number): void {
+    const { n, w, stageSlopes, change } = this;
+    for (let c = 0; c < n; c++) {
+      for (let i = 0; i < STAGES; i++) {
+        let sum = 0;
+        for (let j = 0; j < STAGES; j++) sum += inverseTransformation[i * STAGES + j] * stageSlopes[j][c];
+        change[i][c] = sum;
+      }
+      change[0][c] -= (realEigenvalue / h) * w[c];
+      for (let p = 0; p < 2; p++) {
+        const { alpha, beta } = complexEigenvalues[p];
+        const first = w[(1 + 2 * p) * n + c];
+        const second = w[(2 + 2 * p) * n + c];
+        change[1 + 2 * p][c] -= (alpha * first + beta * second) / h;
+        change[2 + 2 * p][c] -= (alpha * second - beta * first) / h;
+      }
+    }
+    solveReal(this.real, n, this.pivots[0], change[0]);
+    solveComplex(this.complexRe[0], this.complexIm[0], n, this.pivots[1], change[1], change[2]);
+    solveComplex(this.complexRe[1], this.complexIm[1], n, this.pivots[2], change[3], change[4]);
+  }
+
+  /**
+   * The error of the step in units of the tolerance, as a measure that goes like h^10.
+   *
+   * @param twice - filter a large estimate a second time, as is apt in the first step and after a refusal
+   */
+  estimate(h: number, twice: boolean): number {
+    const { n, z, y, errors, point, stageSlopes } = this;
+    const gap = stageSlopes[0];
+    for (let c = 0; c < n; c++) {
+      let sum = 0;
+      for (let i = 0; i < STAGES; i++) sum += startSlopeWeights[i] * z[i * n + c];
+      gap[c] = sum / h;
+      errors[c] = this.slope[c] - gap[c];
+    }
+    solveReal(this.real, n, this.pivots[0], errors);
+    let measure = this.measure();
+    if (measure > 1 && twice) {
+      const slopes = stageSlopes[1];
+      for (let c = 0; c < n; c++) point[c] = y[c] + errors[c];
+      this.system.derivative(this.t, point, slopes);
+      this.evaluations++;
+      for (let c = 0; c < n; c++) errors[c] = slopes[c] - gap[c];
+      solveReal(this.real, n, this.pivots[0], errors);
+      measure = this.measure();
+    }
+    return measure;
+  }
+
+  private measure(): number {
+    const { n, z, errors, meshErrors, tolerance } = this;
+    let worst = 0;
+    for (let c = 0; c < n; c++) {
+      const embedded = Math.abs(errors[c]);
+      let largest = 0;
+      for (let i = 0; i < STAGES; i++) largest = Math.max(largest, Math.abs(z[i * n + c]));
+      let atMesh = 0;
+      if (embedded > 0) atMesh = embedded * Math.min(1, MESH_FACTOR * (embedded / largest) ** 0.8);
+      meshErrors[c] = atMesh;
+      const between = (INTERIOR_FACTOR * embedded) / (this.interior * tolerance[c]);
+      // The embedded error goes like h^6.
+      const measure = Math.max(atMesh / tolerance[c], between ** (10 / 6));
+      if (!(measure <= worst)) worst = measure;
+    }
+    return worst;
+  }
+
+  /** Takes the step over: moves to its end and records it. */
+  accept(h: number, end: number, record: StepRecord): void {
+    const { n, y, z, zBefore, errors, meshErrors } = this;
+    for (let c = 0; c < n; c++) {
+      record.error[c] += meshErrors[c];
+      record.interiorError[c] = Math.max(record.interiorError[c], INTERIOR_FACTOR * Math.abs(errors[c]));
+      y[c] += z[(STAGES - 1) * n + c];
+    }
+    zBefore.set(z);
+    this.stepBefore = h;
+    this.t = end;
+    record.push(end, y, z);
+    this.jacobianIsFresh = false;
+    if (!this.refreshSlope()) {
+      throw new NotConvergedError({
+        where: "solveStiff",
+        reason: `the derivative is not finite at t = ${end}: [${Array.from(this.slope).join(", ")}]`,
+        value: end,
+        evaluations: this.evaluations,
+      });
+    }
+  }
+}
