@@ -96,39 +96,53 @@ function slopeWeights(tau: number): Float64Array {
   return out;
 }
 
-/** Value at 0 of the monic polynomial M with the roots c_i: minus the product of the nodes. */
-const startValue = -nodes.reduce((product, c) => product * c, 1);
+/** Coefficients of the monic polynomial M with the roots c_i, from the constant upward. */
+const monic = monicCoefficients();
+
+function monicCoefficients(): Float64Array {
+  const out = new Float64Array(STAGES + 1);
+  out[0] = 1;
+  nodes.forEach((c, degree) => {
+    for (let k = degree + 1; k > 0; k--) out[k] = out[k - 1] - c * out[k];
+    out[0] *= -c;
+  });
+  return out;
+}
+
+/**
+ * The polynomial of degree 6 that vanishes at the start and at the stages, B(tau) = tau M(tau), M monic with the roots
+ * c_i. It is the shape of the error of u where the stages are exact, as in a stiff component.
+ */
+export function stageBubble(tau: number): number {
+  let product = tau;
+  for (let i = 0; i < STAGES; i++) product *= tau - nodes[i];
+  return product;
+}
 
 /** Q(tau) / (tau (1 - tau)) in powers of tau. */
-const correctionCoefficients = quotientCoefficients();
+const slopeBubbleCoefficients = slopeQuotient();
 
-function quotientCoefficients(): Float64Array {
-  let monic = [1];
-  for (const c of nodes) {
-    const next = new Array<number>(monic.length + 1).fill(0);
-    for (let k = 0; k < monic.length; k++) {
-      next[k] -= c * monic[k];
-      next[k + 1] += monic[k];
-    }
-    monic = next;
-  }
+function slopeQuotient(): Float64Array {
   // Q / tau = sum_k m_k tau^k / (k + 1) / M(0); division by 1 - tau sums the coefficients from the bottom.
   const out = new Float64Array(STAGES);
   let sum = 0;
   for (let k = 0; k < STAGES; k++) {
-    sum += monic[k] / (k + 1) / startValue;
+    sum += monic[k] / (k + 1) / monic[0];
     out[k] = sum;
   }
   return out;
 }
 
 /**
- * The correction Q(tau) = int_0^tau M(s) ds / M(0), M the monic polynomial with the roots c_i. It vanishes at both ends,
- * its slope is 1 at the start and 0 at the nodes: adding it turns u into the polynomial of degree 6 whose slope agrees
- * with f at the start too.
+ * The polynomial Q(tau) = int_0^tau M(s) ds / M(0): it vanishes at both ends, its slope is 1 at the start and 0 at the
+ * stages. It is the shape of the error of u where the slopes at the stages are exact, as in a component that is not stiff.
  */
-export function slopeCorrection(tau: number): number {
+export function slopeBubble(tau: number): number {
   let sum = 0;
-  for (let k = correctionCoefficients.length - 1; k >= 0; k--) sum = sum * tau + correctionCoefficients[k];
+  for (let k = STAGES - 1; k >= 0; k--) sum = sum * tau + slopeBubbleCoefficients[k];
   return sum * tau * (1 - tau);
 }
+
+/** Largest |B| and |Q| on [0, 1], rounded up. */
+export const LARGEST_STAGE_BUBBLE = 1.15e-3;
+export const LARGEST_SLOPE_BUBBLE = 2.99e-2;

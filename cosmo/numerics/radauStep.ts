@@ -2,10 +2,14 @@ import { NotConvergedError } from "../errors";
 import { factorComplex, factorReal, solveComplex, solveReal } from "./luDecomposition";
 import {
   complexEigenvalues,
+  endSlopeWeights,
   inverseTransformation,
+  LARGEST_SLOPE_BUBBLE,
+  LARGEST_STAGE_BUBBLE,
   nodes,
   realEigenvalue,
   STAGES,
+  stageBubble,
   stageWeights,
   startSlopeWeights,
   transformation,
@@ -24,9 +28,6 @@ const NEWTON_PART = 0.02;
  * that grow like k!, as near a pole, give 52.
  */
 const MESH_FACTOR = 20;
-/** Largest error of the polynomial between mesh points over the embedded error. */
-const INTERIOR_FACTOR = 0.1;
-
 /**
  * One step of the five-stage Radau IIA method: stages by simplified Newton iteration, error estimate, acceptance.
  * All memory is taken at construction; nothing is allocated in a step.
@@ -62,6 +63,11 @@ export class RadauStep {
   private readonly tolerance: Float64Array;
   private readonly errors: Float64Array;
   private readonly meshErrors: Float64Array;
+  private readonly interiorErrors: Float64Array;
+  /** How stiff each component is, 0 to 1, and what its polynomial wants of Q and B (see radauCoefficients). */
+  private readonly stiffness: Float64Array;
+  private readonly slopeBubbles: Float64Array;
+  private readonly stageBubbles: Float64Array;
   /** Stage increments of the step before, for the start values. */
   private readonly zBefore: Float64Array;
   private stepBefore = 0;
@@ -95,6 +101,10 @@ export class RadauStep {
     this.tolerance = new Float64Array(n);
     this.errors = new Float64Array(n);
     this.meshErrors = new Float64Array(n);
+    this.interiorErrors = new Float64Array(n);
+    this.stiffness = new Float64Array(n);
+    this.slopeBubbles = new Float64Array(n);
+    this.stageBubbles = new Float64Array(n);
     if (!this.refreshSlope()) {
       throw new NotConvergedError({
         where: "solveStiff",
@@ -292,7 +302,7 @@ export class RadauStep {
       errors[c] = this.slope[c] - gap[c];
     }
     solveReal(this.real, n, this.pivots[0], errors);
-    let measure = this.measure();
+    let measure = this.measure(h);
     if (measure > 1 && twice) {
       const slopes = stageSlopes[1];
       for (let c = 0; c < n; c++) point[c] = y[c] + errors[c];
@@ -300,41 +310,86 @@ export class RadauStep {
       this.evaluations++;
       for (let c = 0; c < n; c++) errors[c] = slopes[c] - gap[c];
       solveReal(this.real, n, this.pivots[0], errors);
-      measure = this.measure();
+      measure = this.measure(h);
     }
     return measure;
   }
 
-  private measure(): number {
-    const { n, z, errors, meshErrors, tolerance } = this;
+  /** Takes the step as exact, for a fast transient that is not to be followed; the measure is then that of an equal step. */
+  disregardError(): number {
+    this.meshErrors.fill(0);
+    this.interiorErrors.fill(0);
+    return 0.3;
+  }
+
+  private measure(h: number): number {
+    const { n, z, errors, meshErrors, interiorErrors, tolerance } = this;
+    this.findBubbles(h);
     let worst = 0;
     for (let c = 0; c < n; c++) {
       const embedded = Math.abs(errors[c]);
       let largest = 0;
       for (let i = 0; i < STAGES; i++) largest = Math.max(largest, Math.abs(z[i * n + c]));
       let atMesh = 0;
-      if (embedded > 0) atMesh = embedded * Math.min(1, MESH_FACTOR * (embedded / largest) ** 0.8);
+      if (embedded > 0) {
+        atMesh = embedded * Math.min(1, MESH_FACTOR * (embedded / largest) ** 0.8 + this.stiffness[c] ** 4);
+      }
       meshErrors[c] = atMesh;
-      const between = (INTERIOR_FACTOR * embedded) / (this.interior * tolerance[c]);
-      // The embedded error goes like h^6.
-      const measure = Math.max(atMesh / tolerance[c], between ** (10 / 6));
+      interiorErrors[c] =
+        LARGEST_SLOPE_BUBBLE * realEigenvalue * embedded + LARGEST_STAGE_BUBBLE * Math.abs(this.stageBubbles[c]);
+      // The polynomial's error goes like h^6.
+      const between = (interiorErrors[c] / (this.interior * tolerance[c])) ** (10 / 6);
+      const measure = Math.max(atMesh / tolerance[c], between);
       if (!(measure <= worst)) worst = measure;
     }
     return worst;
   }
 
+  /**
+   * What the step before tells about the error between mesh points: how far the polynomial's slope at the start is from
+   * the end slope before, and how far its continuation backward misses the last inner stage before.
+   *
+   * The filter damps the embedded error by 1 / (1 + gamma_0 |h lambda|), so its ratio to the jump of the slope shows how
+   * stiff a component is.
+   */
+  private findBubbles(h: number): void {
+    const { n, z, zBefore, errors, stepBefore, slopeBubbles, stageBubbles, stiffness, weights } = this;
+    if (stepBefore === 0) {
+      slopeBubbles.fill(0);
+      stageBubbles.fill(0);
+      stiffness.fill(0);
+      return;
+    }
+    const ratio = h / stepBefore;
+    const tau = (nodes[3] - 1) / ratio;
+    const inverse = 1 / stageBubble(tau);
+    stageWeights(tau, weights);
+    for (let c = 0; c < n; c++) {
+      let jump = 0;
+      let miss = zBefore[3 * n + c] - zBefore[4 * n + c];
+      for (let i = 0; i < STAGES; i++) {
+        jump += ratio * endSlopeWeights[i] * zBefore[i * n + c] - startSlopeWeights[i] * z[i * n + c];
+        miss -= weights[i] * z[i * n + c];
+      }
+      const stiff = jump === 0 ? 1 : Math.min(1, Math.abs(1 - (errors[c] * realEigenvalue) / jump));
+      stiffness[c] = stiff;
+      slopeBubbles[c] = (1 - stiff) * jump;
+      stageBubbles[c] = stiff * miss * inverse;
+    }
+  }
+
   /** Takes the step over: moves to its end and records it. */
   accept(h: number, end: number, record: StepRecord): void {
-    const { n, y, z, zBefore, errors, meshErrors } = this;
+    const { n, y, z, meshErrors, interiorErrors } = this;
     for (let c = 0; c < n; c++) {
       record.error[c] += meshErrors[c];
-      record.interiorError[c] = Math.max(record.interiorError[c], INTERIOR_FACTOR * Math.abs(errors[c]));
+      record.interiorError[c] = Math.max(record.interiorError[c], interiorErrors[c]);
       y[c] += z[(STAGES - 1) * n + c];
     }
-    zBefore.set(z);
+    this.zBefore.set(z);
     this.stepBefore = h;
     this.t = end;
-    record.push(end, y, z);
+    record.push(end, y, z, this.slopeBubbles, this.stageBubbles);
     this.jacobianIsFresh = false;
     if (!this.refreshSlope()) {
       throw new NotConvergedError({

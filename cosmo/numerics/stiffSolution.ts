@@ -1,5 +1,5 @@
 import { DomainError } from "../errors";
-import { endSlopeWeights, STAGES, slopeCorrection, stageWeights, startSlopeWeights } from "./radauCoefficients";
+import { STAGES, slopeBubble, stageBubble, stageWeights } from "./radauCoefficients";
 
 /** The solution of a system of differential equations, as a function of t. */
 export interface StiffSolution {
@@ -44,8 +44,8 @@ export class StepRecord implements StiffSolution {
   readonly interiorError: Float64Array;
   /** Stage increments of each step, 5n values. */
   private increments: Float64Array;
-  /** h (f(y_0) - u'(0)) of each step, n values: the factor of the slope correction. */
-  private corrections: Float64Array;
+  /** The amounts of Q and of B of each step, n values each. */
+  private bubbles: Float64Array;
   private readonly weights = new Float64Array(STAGES);
 
   constructor(start: number, initial: Float64Array) {
@@ -54,33 +54,25 @@ export class StepRecord implements StiffSolution {
     this.mesh = new Float64Array(INITIAL_STEPS + 1);
     this.values = new Float64Array((INITIAL_STEPS + 1) * n);
     this.increments = new Float64Array(INITIAL_STEPS * STAGES * n);
-    this.corrections = new Float64Array(INITIAL_STEPS * n);
+    this.bubbles = new Float64Array(INITIAL_STEPS * 2 * n);
     this.error = new Float64Array(n);
     this.interiorError = new Float64Array(n);
     this.mesh[0] = start;
     this.values.set(initial);
   }
 
-  /** Adds a step that ends at (t, y) with the stage increments z. */
-  push(t: number, y: Float64Array, z: Float64Array): void {
+  /**
+   * Adds a step that ends at (t, y), with the stage increments z and the amounts of Q and B that improve the polynomial.
+   */
+  push(t: number, y: Float64Array, z: Float64Array, slopeBubbles: Float64Array, stageBubbles: Float64Array): void {
     const n = this.dimension;
     const k = this.steps;
     if (k + 1 === this.mesh.length) this.resize(2 * k);
     this.mesh[k + 1] = t;
     this.values.set(y, (k + 1) * n);
     this.increments.set(z, k * STAGES * n);
-    // The first step starts off the smooth solution perhaps, so its starting slope says nothing about its inside.
-    if (k > 0) {
-      const ratio = (t - this.mesh[k]) / (this.mesh[k] - this.mesh[k - 1]);
-      for (let c = 0; c < n; c++) {
-        let gap = 0;
-        for (let i = 0; i < STAGES; i++) {
-          gap += ratio * endSlopeWeights[i] * this.increments[((k - 1) * STAGES + i) * n + c];
-          gap -= startSlopeWeights[i] * z[i * n + c];
-        }
-        this.corrections[k * n + c] = gap;
-      }
-    }
+    this.bubbles.set(slopeBubbles, 2 * k * n);
+    this.bubbles.set(stageBubbles, (2 * k + 1) * n);
     this.steps = k + 1;
   }
 
@@ -95,7 +87,7 @@ export class StepRecord implements StiffSolution {
     this.mesh = resized(this.mesh, steps + 1);
     this.values = resized(this.values, (steps + 1) * n);
     this.increments = resized(this.increments, steps * STAGES * n);
-    this.corrections = resized(this.corrections, steps * n);
+    this.bubbles = resized(this.bubbles, steps * 2 * n);
   }
 
   locate(t: number): number {
@@ -125,12 +117,13 @@ export class StepRecord implements StiffSolution {
   }
 
   evaluateInStep(step: number, t: number, out: Float64Array): void {
-    const { dimension: n, weights, increments, mesh } = this;
+    const { dimension: n, weights, increments, bubbles, mesh } = this;
     const tau = (t - mesh[step]) / (mesh[step + 1] - mesh[step]);
     stageWeights(tau, weights);
-    const correction = slopeCorrection(tau);
+    const slope = slopeBubble(tau);
+    const stage = stageBubble(tau);
     for (let c = 0; c < n; c++) {
-      let sum = correction * this.corrections[step * n + c];
+      let sum = slope * bubbles[2 * step * n + c] + stage * bubbles[(2 * step + 1) * n + c];
       for (let i = 0, at = step * STAGES * n + c; i < STAGES; i++, at += n) sum += weights[i] * increments[at];
       out[c] = this.values[step * n + c] + sum;
     }
