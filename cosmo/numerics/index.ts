@@ -1,5 +1,7 @@
 export type { ChebyshevOptions } from "./chebyshev";
 export { buildChebyshev, PiecewiseChebyshev } from "./chebyshev";
+export { curvedSine } from "./curvedSine";
+export { curvedVolume } from "./curvedVolume";
 export type { FindMinimumOptions, MinimumResult } from "./findMinimum";
 export { findMinimum } from "./findMinimum";
 export type { FindRootOptions } from "./findRoot";
@@ -9,6 +11,7 @@ export { gaussLegendre } from "./gaussLegendre";
 export type { IntegrateOptions } from "./integrate";
 export { integrate } from "./integrate";
 export type { NumericalResult } from "./numericalResult";
+export { richardsonDerivative } from "./richardson";
 export type { StiffOptions, StiffSystem } from "./stiff";
 export { solveStiff } from "./stiff";
 export type { StiffSolution } from "./stiffSolution";

@@ -17,9 +17,11 @@ import {
 import type { StiffSystem } from "./stiff";
 import type { StepRecord } from "./stiffSolution";
 
+/** Beyond this ratio of two steps the polynomial of the step before is no guide. */
+const LONGEST_EXTRAPOLATION = 5;
 const MAXIMUM_ITERATIONS = 12;
 /** Below this rate of convergence the Jacobian is kept for the next step. */
-const KEEP_JACOBIAN = 1e-3;
+const KEEP_JACOBIAN = 1e-4;
 /** Newton's iteration stops at this part of the tolerance. */
 const NEWTON_PART = 0.02;
 /**
@@ -127,19 +129,42 @@ export class RadauStep {
     return finite;
   }
 
-  /** The Jacobian by forward differences. */
-  private linearize(): void {
-    const { n, y, point, slope, jacobian, absolute } = this;
-    const shifted = this.change[0];
+  /**
+   * The Jacobian by forward differences, in the middle of the step as the polynomial of the step before foresees it: there
+   * it differs less from the stages than at the start. Without a step before it is taken at the start.
+   */
+  private linearize(h: number): void {
+    const { n, y, zBefore, weights, point, jacobian, absolute, stepBefore } = this;
+    const base = this.change[0];
+    const shifted = this.change[1];
     point.set(y);
+    let middle = this.t;
+    let finite = false;
+    if (stepBefore !== 0 && h / stepBefore <= LONGEST_EXTRAPOLATION) {
+      middle += 0.5 * h;
+      stageWeights(1 + (0.5 * h) / stepBefore, weights);
+      for (let c = 0; c < n; c++) {
+        for (let i = 0; i < STAGES; i++) point[c] += weights[i] * zBefore[i * n + c];
+        point[c] -= zBefore[(STAGES - 1) * n + c];
+      }
+      this.system.derivative(middle, point, base);
+      this.evaluations++;
+      finite = true;
+      for (let c = 0; c < n; c++) finite = finite && Number.isFinite(base[c]);
+    }
+    if (!finite) {
+      middle = this.t;
+      point.set(y);
+      base.set(this.slope);
+    }
     for (let j = 0; j < n; j++) {
+      const held = point[j];
       // The absolute tolerance is what the caller holds for small in this component.
-      const increment = Math.max(Math.sqrt(Number.EPSILON) * Math.abs(y[j]), absolute[j]);
-      point[j] = y[j] + increment;
-      const exact = point[j] - y[j];
-      this.system.derivative(this.t, point, shifted);
-      for (let i = 0; i < n; i++) jacobian[i * n + j] = (shifted[i] - slope[i]) / exact;
-      point[j] = y[j];
+      point[j] = held + Math.max(Math.sqrt(Number.EPSILON) * Math.abs(held), absolute[j]);
+      const increment = point[j] - held;
+      this.system.derivative(middle, point, shifted);
+      for (let i = 0; i < n; i++) jacobian[i * n + j] = (shifted[i] - base[i]) / increment;
+      point[j] = held;
     }
     this.evaluations += n;
     this.jacobianIsFresh = true;
@@ -174,7 +199,7 @@ export class RadauStep {
   private predict(h: number): void {
     const { n, z, w, zBefore, weights, stepBefore } = this;
     const ratio = h / stepBefore;
-    if (stepBefore === 0 || ratio > 5) {
+    if (stepBefore === 0 || ratio > LONGEST_EXTRAPOLATION) {
       z.fill(0);
       w.fill(0);
       return;
@@ -198,7 +223,7 @@ export class RadauStep {
 
   /** Finds the stages of a step of size h; false if Newton's iteration does not converge (see `reduction`). */
   attempt(h: number): boolean {
-    if (!this.jacobianIsFresh && !(this.rate <= KEEP_JACOBIAN)) this.linearize();
+    if (!this.jacobianIsFresh && !(this.rate <= KEEP_JACOBIAN)) this.linearize(h);
     this.reduction = 0.5;
     for (;;) {
       if ((this.factoredStep === h || this.factor(h)) && this.iterate(h)) return true;
@@ -206,7 +231,7 @@ export class RadauStep {
         this.rate = 1;
         return false;
       }
-      this.linearize();
+      this.linearize(h);
     }
   }
 
