@@ -1,0 +1,21 @@
+/** What the package offers; a cell of the kernel knows all of it without an import. */
+export {
+  type CellOutputOptions,
+  CellResult,
+  type Chart,
+  cellOutput,
+  type Displayable,
+  displaySymbol,
+  formatNumber,
+  formatWithError,
+  intervalChart,
+  lineChart,
+  type MimeBundle,
+  type Progress,
+  type ProgressOptions,
+  progress,
+  type Table,
+  type TableOptions,
+  table,
+  type VegaLiteSpec,
+} from "./display";

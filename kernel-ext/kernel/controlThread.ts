@@ -1,0 +1,129 @@
+/**
+ * The thread that owns the control and heartbeat sockets: it answers while the main thread is kept busy by a cell, ends
+ * code that does not give way to an interrupt, and takes the process down when its parent is gone.
+ */
+import { Session } from "node:inspector";
+import { type MessagePort, parentPort, workerData } from "node:worker_threads";
+import * as zmq from "zeromq";
+import { phase } from "./phase";
+import { type ConnectionInfo, socketAddress, WireCodec, WireError, type WireMessage } from "./wire";
+
+export interface ControlThreadData {
+  info: ConnectionInfo;
+  state: Int32Array;
+  /** The process without which this one has no purpose. */
+  parent: number;
+}
+
+/** From this thread to the main one. */
+export type FromControl =
+  | { type: "ready" }
+  | { type: "failed"; message: string }
+  | { type: "request"; id: number; message: WireMessage }
+  | { type: "refused"; message: string }
+  | { type: "tick" }
+  | { type: "closed" };
+
+/** From the main thread to this one. */
+export type ToControl = { type: "reply"; id: number; frames: Uint8Array[] } | { type: "close" };
+
+/** How long the main thread may take to answer before running code is ended by force. */
+const patience = 150;
+/** How often the main thread is woken and the parent looked for. */
+const tickEvery = 1000;
+/** A shutdown that is not answered by then is carried out from here. */
+const shutdownPatience = 3000;
+
+function terminateRunningCode(): void {
+  const session = new Session();
+  session.connectToMainThread();
+  session.post("Runtime.terminateExecution", () => session.disconnect());
+}
+
+async function serve(port: MessagePort, data: ControlThreadData): Promise<void> {
+  const codec = new WireCodec(data.info.key, true);
+  const control = new zmq.Router({ linger: 1000, sendHighWaterMark: 0, receiveHighWaterMark: 0 });
+  const heartbeat = new zmq.Reply({ linger: 0 });
+  const post = (message: FromControl): void => port.postMessage(message);
+  await Promise.all([
+    control.bind(socketAddress(data.info, "control")),
+    heartbeat.bind(socketAddress(data.info, "hb")),
+  ]);
+
+  const unanswered = new Map<number, NodeJS.Timeout[]>();
+  let lastId = 0;
+  let sending = Promise.resolve();
+
+  const answered = (id: number): void => {
+    for (const timer of unanswered.get(id) ?? []) clearTimeout(timer);
+    unanswered.delete(id);
+  };
+
+  /** Ends running code again and again until the main thread has answered: it may start more before it sees the request. */
+  const endCode = (id: number): NodeJS.Timeout =>
+    setInterval(() => {
+      if (unanswered.has(id) && Atomics.load(data.state, 0) === phase.running) terminateRunningCode();
+    }, patience);
+
+  const receive = async (): Promise<void> => {
+    for await (const frames of control) {
+      let message: WireMessage;
+      try {
+        message = codec.parse(frames);
+      } catch (error) {
+        if (!(error instanceof WireError)) throw error;
+        post({ type: "refused", message: error.message });
+        continue;
+      }
+      const id = ++lastId;
+      const type = message.header.msg_type;
+      if (type === "interrupt_request" || type === "shutdown_request") {
+        const timers = [endCode(id)];
+        if (type === "shutdown_request") {
+          timers.push(setTimeout(() => process.kill(process.pid, "SIGKILL"), shutdownPatience));
+        }
+        unanswered.set(id, timers);
+      }
+      post({ type: "request", id, message });
+    }
+  };
+
+  const beat = async (): Promise<void> => {
+    for await (const frames of heartbeat) await heartbeat.send(frames);
+  };
+
+  const tick = setInterval(() => {
+    if (process.ppid !== data.parent) process.kill(process.pid, "SIGKILL");
+    post({ type: "tick" });
+  }, tickEvery);
+
+  port.on("message", (message: ToControl) => {
+    if (message.type === "reply") {
+      answered(message.id);
+      sending = sending.then(() => control.send(message.frames));
+      return;
+    }
+    clearInterval(tick);
+    for (const id of [...unanswered.keys()]) answered(id);
+    sending.then(() => {
+      control.close();
+      heartbeat.close();
+      post({ type: "closed" });
+      port.close();
+    });
+  });
+
+  const failed = (error: unknown): void => {
+    if (!control.closed) post({ type: "failed", message: String(error) });
+  };
+  receive().catch(failed);
+  beat().catch(failed);
+  post({ type: "ready" });
+}
+
+if (parentPort) {
+  const port = parentPort;
+  serve(port, workerData as ControlThreadData).catch((error: unknown) => {
+    port.postMessage({ type: "failed", message: String(error) } satisfies FromControl);
+  });
+}

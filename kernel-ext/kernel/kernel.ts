@@ -1,0 +1,374 @@
+/** The kernel behind the sockets: what each request is answered with and what is published meanwhile. */
+import { randomUUID } from "node:crypto";
+import { version as tslabVersion } from "tslab/package.json";
+import type { MimeBundle } from "../display/sink";
+import { type CellContext, currentContext, InterruptError, leaveContext } from "./cellContext";
+import { type CellError, describeThrown } from "./cellError";
+import type { CellOutcome, CellRunner } from "./cellRunner";
+import { pointsFromUnits, unitsFromPoints } from "./cursor";
+import { History } from "./history";
+import { portableBundle } from "./mimeBundle";
+import { sleep } from "./ownTimers";
+import type { SendQueue } from "./sendQueue";
+import { type JsonObject, type MessageHeader, protocolVersion, type WireCodec, type WireMessage } from "./wire";
+
+export interface KernelParts {
+  codec: WireCodec;
+  iopub: SendQueue;
+  shell: SendQueue;
+  runner: CellRunner;
+  version: string;
+  log(text: string): void;
+  /** Whether the shell socket has more messages at this moment. */
+  moreToRead(): boolean;
+  /** Called when a shutdown has been answered. */
+  shutdown(): void;
+}
+
+interface Waiting {
+  message: WireMessage;
+  aborted: boolean;
+}
+
+type Reply = { type: string; content: JsonObject } | undefined;
+
+/** How many ended cells are remembered so that what they left running can be stopped. */
+const rememberedCells = 1000;
+/** A pause that lets requests arrive which were sent before a failure could be known. */
+const gatherPause = 5;
+
+export class Kernel {
+  private readonly history = new History();
+  private readonly waiting: Waiting[] = [];
+  private readonly cells: CellContext[] = [];
+  private handling = false;
+  private count = 0;
+  private last: CellContext | undefined;
+
+  constructor(private readonly parts: KernelParts) {}
+
+  // ---- publishing
+
+  private publish(type: string, content: JsonObject, parent: MessageHeader | undefined, metadata?: JsonObject): void {
+    const frames = this.parts.codec.compose(type, content, {
+      parent,
+      identities: [Buffer.from(type)],
+      ...(metadata ? { metadata } : {}),
+    });
+    this.parts.iopub.push(frames);
+  }
+
+  publishStatus(state: "starting" | "busy" | "idle", parent?: MessageHeader): void {
+    this.publish("status", { execution_state: state }, parent);
+  }
+
+  private publishError(error: CellError, parent: MessageHeader): void {
+    const { ename, evalue, traceback, place } = error;
+    this.publish("error", { ename, evalue, traceback }, parent, place && { line: place.line, column: place.column });
+  }
+
+  /** The cell that code belongs to when nothing better is known: the one that runs, or ran last. */
+  lastCell(): CellContext | undefined {
+    return this.last;
+  }
+
+  /** The cell that output of the running code goes to; throws for code of an interrupted cell. */
+  private outputCell(): CellContext | undefined {
+    const context = currentContext() ?? this.last;
+    if (context?.cancelled) throw new InterruptError();
+    return context;
+  }
+
+  /** Publishes text that running code wrote; false when no cell has run yet. */
+  writeText(name: "stdout" | "stderr", text: string): boolean {
+    const context = this.outputCell();
+    if (!context) return false;
+    if (context.silent || text === "") return true;
+    this.parts.iopub.pushText(context.parent, name, text, (merged) =>
+      this.parts.codec.compose(
+        "stream",
+        { name, text: merged },
+        { parent: context.parent, identities: [Buffer.from("stream")] },
+      ),
+    );
+    return true;
+  }
+
+  /** Publishes a display, or the new content of one that was shown under the same id. */
+  display(bundle: MimeBundle, displayId: string | undefined, update: boolean, metadata: JsonObject = {}): void {
+    const context = this.outputCell();
+    if (!context || context.silent) return;
+    this.publish(
+      update ? "update_display_data" : "display_data",
+      { data: portableBundle(bundle), metadata, transient: displayId === undefined ? {} : { display_id: displayId } },
+      context.parent,
+    );
+  }
+
+  // ---- the queue of shell requests
+
+  /** Takes a request of the shell socket; requests are handled one after the other. */
+  receive(message: WireMessage): void {
+    this.waiting.push({ message, aborted: false });
+    this.handleNext();
+  }
+
+  private handleNext(): void {
+    if (this.handling) return;
+    const next = this.waiting.shift();
+    if (!next) return;
+    this.handling = true;
+    this.handle(next).then(
+      () => {
+        this.handling = false;
+        this.handleNext();
+      },
+      (error: unknown) => {
+        this.parts.log(`a ${next.message.header.msg_type} failed: ${(error as Error)?.stack ?? error}`);
+        this.handling = false;
+        this.handleNext();
+      },
+    );
+  }
+
+  private async handle({ message, aborted }: Waiting): Promise<void> {
+    const { header } = message;
+    this.publishStatus("busy", header);
+    let reply: Reply;
+    try {
+      if (header.msg_type === "execute_request") {
+        reply = { type: "execute_reply", content: aborted ? { status: "aborted" } : await this.execute(message) };
+      } else reply = this.answer(message);
+    } catch (error) {
+      const { ename, evalue, traceback } = describeThrown(error, this.parts.runner.sources);
+      this.parts.log(`a ${header.msg_type} failed: ${(error as Error)?.stack ?? error}`);
+      reply = {
+        type: header.msg_type.replace(/_request$/, "_reply"),
+        content: { status: "error", ename, evalue, traceback },
+      };
+    }
+    // What the request published is on its way before the reply is: who sees the reply may stop listening.
+    await this.parts.iopub.drain();
+    if (reply) this.parts.shell.push(this.replyFrames(reply, message));
+    this.publishStatus("idle", header);
+  }
+
+  private replyFrames(reply: { type: string; content: JsonObject }, request: WireMessage): Buffer[] {
+    return this.parts.codec.compose(reply.type, reply.content, {
+      parent: request.header,
+      identities: request.identities,
+    });
+  }
+
+  /** Answers a request of the control socket at once; the frames are sent by the control thread. */
+  control(message: WireMessage): Buffer[] {
+    this.publishStatus("busy", message.header);
+    const reply = this.answer(message) ?? { type: "error", content: { status: "error" } };
+    const frames = this.replyFrames(reply, message);
+    this.publishStatus("idle", message.header);
+    return frames;
+  }
+
+  private answer(message: WireMessage): Reply {
+    const { content, header } = message;
+    switch (header.msg_type) {
+      case "kernel_info_request":
+        return { type: "kernel_info_reply", content: this.kernelInfo() };
+      case "complete_request":
+        return { type: "complete_reply", content: this.complete(content) };
+      case "inspect_request":
+        return { type: "inspect_reply", content: this.inspect(content) };
+      case "is_complete_request":
+        return { type: "is_complete_reply", content: this.parts.runner.isComplete(requiredText(content, "code")) };
+      case "history_request":
+        return { type: "history_reply", content: this.history.answer(content) };
+      case "comm_info_request":
+        return { type: "comm_info_reply", content: { status: "ok", comms: {} } };
+      case "comm_open":
+        // No target is known here; the specification asks for the comm to be closed again.
+        this.publish("comm_close", { comm_id: content.comm_id ?? "", data: {} }, header);
+        return undefined;
+      case "comm_msg":
+      case "comm_close":
+        return undefined;
+      case "interrupt_request":
+        this.interrupt();
+        return { type: "interrupt_reply", content: { status: "ok" } };
+      case "shutdown_request":
+        this.interrupt();
+        this.parts.shutdown();
+        return { type: "shutdown_reply", content: { status: "ok", restart: content.restart === true } };
+      default:
+        this.parts.log(`a message of the unknown type ${JSON.stringify(header.msg_type)} is ignored`);
+        return undefined;
+    }
+  }
+
+  private kernelInfo(): JsonObject {
+    return {
+      status: "ok",
+      protocol_version: protocolVersion,
+      implementation: "cosmology-cells",
+      implementation_version: this.parts.version,
+      language_info: {
+        name: "typescript",
+        version: "5.0.4",
+        mimetype: "text/typescript",
+        file_extension: ".ts",
+        codemirror_mode: { name: "javascript", mode: "typescript", typescript: true },
+      },
+      banner: `cosmology-cells ${this.parts.version} (TypeScript through tslab ${tslabVersion}, Node ${process.versions.node})`,
+      help_links: [],
+      debugger: false,
+    };
+  }
+
+  private complete(content: JsonObject): JsonObject {
+    const code = requiredText(content, "code");
+    const at = unitsFromPoints(code, typeof content.cursor_pos === "number" ? content.cursor_pos : code.length);
+    const { start, end, candidates } = this.parts.runner.complete(code, at);
+    return {
+      status: "ok",
+      matches: candidates,
+      cursor_start: pointsFromUnits(code, start),
+      cursor_end: pointsFromUnits(code, end),
+      metadata: {},
+    };
+  }
+
+  private inspect(content: JsonObject): JsonObject {
+    const code = requiredText(content, "code");
+    const at = unitsFromPoints(code, typeof content.cursor_pos === "number" ? content.cursor_pos : code.length);
+    // At the end of a name, where a cursor usually stands, the compiler sees nothing any more.
+    const text = this.parts.runner.inspect(code, at) ?? (at > 0 ? this.parts.runner.inspect(code, at - 1) : undefined);
+    return {
+      status: "ok",
+      found: text !== undefined,
+      data: text === undefined ? {} : { "text/plain": text },
+      metadata: {},
+    };
+  }
+
+  // ---- cells
+
+  private async execute(message: WireMessage): Promise<JsonObject> {
+    const { content, header } = message;
+    const code = requiredText(content, "code");
+    const silent = content.silent === true;
+    const stored = !silent && content.store_history !== false;
+    if (stored) this.count++;
+    const count = this.count;
+    if (!silent) this.publish("execute_input", { code, execution_count: count }, header);
+    const outcome = await this.runCell(code, header, silent);
+    if (outcome.result && !silent) {
+      this.publish("execute_result", { execution_count: count, data: outcome.result, metadata: {} }, header);
+    }
+    if (stored) this.history.add(count, code, (outcome.result?.["text/plain"] as string | undefined) ?? null);
+    if (outcome.error) {
+      if (!silent) this.publishError(outcome.error, header);
+      if (content.stop_on_error !== false) await this.abortWaiting();
+      const { ename, evalue, traceback } = outcome.error;
+      return { status: "error", execution_count: count, ename, evalue, traceback, user_expressions: {}, payload: [] };
+    }
+    return {
+      status: "ok",
+      execution_count: count,
+      user_expressions: await this.userExpressions(content.user_expressions, header),
+      payload: [],
+    };
+  }
+
+  private async runCell(code: string, parent: MessageHeader, silent: boolean): Promise<CellOutcome> {
+    const context: CellContext = {
+      count: this.count,
+      parent,
+      silent,
+      cancelled: false,
+      ended: false,
+      rejections: new Map(),
+    };
+    this.last = context;
+    this.cells.push(context);
+    if (this.cells.length > rememberedCells) this.cells.shift();
+    return this.parts.runner.execute(code, context);
+  }
+
+  private async userExpressions(expressions: unknown, parent: MessageHeader): Promise<JsonObject> {
+    const results: JsonObject = {};
+    if (typeof expressions !== "object" || expressions === null) return results;
+    for (const [name, expression] of Object.entries(expressions)) {
+      const { result, error } = await this.runCell(String(expression), parent, true);
+      results[name] = error
+        ? { status: "error", ename: error.ename, evalue: error.evalue, traceback: error.traceback }
+        : { status: "ok", data: result ?? {}, metadata: {} };
+    }
+    return results;
+  }
+
+  /** Marks the cells that were sent before the failure of this one could be known. */
+  private async abortWaiting(): Promise<void> {
+    let known: number;
+    do {
+      known = this.waiting.length;
+      await sleep(gatherPause);
+    } while (this.parts.moreToRead() || this.waiting.length > known);
+    for (const one of this.waiting) if (one.message.header.msg_type === "execute_request") one.aborted = true;
+  }
+
+  /** Runs the hidden first cell; its failure is told, since every cell after it lacks the names. */
+  async runPrelude(code: string): Promise<void> {
+    const { error } = await this.runCell(code, this.parts.codec.header("execute_request"), true);
+    if (error) this.parts.log(`the names of the package are not available to cells: ${error.traceback.join("\n")}`);
+    this.last = undefined;
+  }
+
+  /** Stops the running cell; without one, stops what ended cells have left running. */
+  interrupt(): void {
+    leaveContext();
+    if (this.parts.runner.interrupt()) return;
+    for (const context of this.cells) context.cancelled = true;
+  }
+
+  // ---- failures that no cell catches
+
+  /** A promise was rejected and nobody has handled it so far. */
+  rejected(reason: unknown, promise: Promise<unknown>): void {
+    const context = currentContext() ?? this.last;
+    if (!context)
+      this.parts.log(`unhandled rejection: ${describeThrown(reason, this.parts.runner.sources).traceback.join("\n")}`);
+    else if (context.cancelled && reason instanceof InterruptError) return;
+    else if (context.ended) this.late(reason, context);
+    else context.rejections.set(promise, reason);
+  }
+
+  /** A rejection was handled after all. */
+  handledLate(promise: Promise<unknown>): void {
+    for (const context of this.cells) context.rejections.delete(promise);
+  }
+
+  /** An exception came out of a callback. */
+  uncaught(thrown: unknown): void {
+    const context = currentContext() ?? this.last;
+    if (!context)
+      this.parts.log(`uncaught exception: ${describeThrown(thrown, this.parts.runner.sources).traceback.join("\n")}`);
+    else if (context.cancelled && thrown instanceof InterruptError) return;
+    else if (!this.parts.runner.abort(context, thrown)) this.late(thrown, context);
+  }
+
+  /** Reports a failure of a cell's code that came after the cell's end, in that cell. */
+  private late(thrown: unknown, context: CellContext): void {
+    const error = describeThrown(thrown, this.parts.runner.sources, `(after cell ${context.count} had ended)`);
+    if (!context.silent) this.publishError(error, context.parent);
+  }
+
+  /** A new id for a display. */
+  static newDisplayId(): string {
+    return randomUUID();
+  }
+}
+
+function requiredText(content: JsonObject, field: string): string {
+  const value = content[field];
+  if (typeof value !== "string") throw new TypeError(`the field "${field}" must be text, got ${JSON.stringify(value)}`);
+  return value;
+}
