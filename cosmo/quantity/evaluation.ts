@@ -43,6 +43,12 @@ export class Evaluation<M> {
     }
   }
 
+  /** Puts a result in place of what a part would compute: for fits that vary what is otherwise fixed. Only before first use. */
+  preset<T>(part: Part<M, T>, value: T): void {
+    if (this.results.has(part)) throw new Error(`part "${part.name}" is computed already`);
+    this.results.set(part, { value });
+  }
+
   /** Names of the parts computed so far, in order of completion. */
   computedParts(): string[] {
     return [...this.results.keys()].map((part) => part.name);

@@ -1,4 +1,24 @@
 export { type Gas, gasPart, heliumToHydrogenRatio } from "./gas";
-export { type IonizationHistory, ionizationHistoryPart } from "./ionizationHistory";
+export {
+  atomSettings,
+  equilibriumAt,
+  type IonizationHistory,
+  ionizationHistoryPart,
+  kineticHistory,
+} from "./ionizationHistory";
+export {
+  hydrogenIonizedFraction,
+  hydrogenIonizedFractionQuantity,
+  residualIonizedFraction,
+  residualIonizedFractionQuantity,
+} from "./ionizedFractions";
 export { massFractionFromNucleonFraction, nucleosynthesisHelium } from "./nucleosynthesisHelium";
+export { reionizationProfile } from "./reionizationProfile";
 export { type SahaState, sahaEquilibrium } from "./saha";
+export {
+  matterTemperature,
+  matterTemperatureQuantity,
+  radiationTemperature,
+  radiationTemperatureQuantity,
+} from "./temperatures";
+export { recombinationNotes, recombinationSources, tierMethods } from "./tierStatement";

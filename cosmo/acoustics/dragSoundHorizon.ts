@@ -1,0 +1,42 @@
+import type { ModelEvaluation, ModelPart } from "../expansion";
+import { dragRedshift, historyQuantity } from "../lastScattering";
+import { soundHorizon } from "./soundHorizon";
+
+const horizonPart: ModelPart<number> = {
+  name: "sound horizon at the drag epoch",
+  compute: (evaluation) => soundHorizon(evaluation, dragRedshift(evaluation)).value,
+};
+
+/**
+ * r_drag = r_s(z_drag), Mpc: the ruler of baryon acoustic oscillations.
+ *
+ * Accuracy 1e-7, that of z_drag. Source: Eisenstein & Hu 1998; Planck 2018 VI, table 2.
+ * @example dragSoundHorizon(evaluation) // 147.1
+ */
+export function dragSoundHorizon(evaluation: ModelEvaluation): number {
+  return evaluation.once(horizonPart);
+}
+
+export const dragSoundHorizonQuantity = historyQuantity({
+  name: "dragSoundHorizon",
+  symbol: "r_drag",
+  unit: "Mpc",
+  description: "Comoving sound horizon at the drag epoch",
+  equation: String.raw`r_\mathrm{drag} = r_s(z_\mathrm{drag})`,
+  method: "adaptive quadrature to the z_drag of the full computation",
+  accuracy: 1e-7,
+  sources: ["eisensteinHu1998", "planck2018Parameters"],
+  compute: dragSoundHorizon,
+});
+
+export const dragSoundHorizonTimesReducedHubbleQuantity = historyQuantity({
+  name: "dragSoundHorizonTimesReducedHubble",
+  symbol: "r_drag h",
+  unit: "Mpc",
+  description: "Comoving sound horizon at the drag epoch times h",
+  equation: String.raw`r_\mathrm{drag}\,h`,
+  method: "product",
+  accuracy: 1e-7,
+  sources: ["eisensteinHu1998"],
+  compute: (evaluation) => dragSoundHorizon(evaluation) * evaluation.model.reducedHubble,
+});

@@ -1,0 +1,25 @@
+export { baryonLoading, baryonLoadingQuantity, baryonLoadingToday } from "./baryonLoading";
+export { dragDepth, dragDepthQuantity } from "./dragDepth";
+export { dragEpochPart, dragRedshift, dragRedshiftQuantity } from "./dragRedshift";
+export { type HistoryQuantityFields, historyQuantity } from "./historyQuantity";
+export { lastScatteringPart, lastScatteringRedshift, lastScatteringRedshiftQuantity } from "./lastScatteringRedshift";
+export { opticalDepth, opticalDepthQuantity } from "./opticalDepth";
+export { OpticalDepthHistory, opticalDepthPart } from "./opticalDepthHistory";
+export {
+  ionizedFraction,
+  ionizedFractionQuantity,
+  reionizationDepthQuantity,
+  reionizationRedshiftPart,
+  reionizationRedshiftQuantity,
+} from "./reionization";
+export {
+  visibility,
+  visibilityHalfHeights,
+  visibilityMedianRedshift,
+  visibilityMedianRedshiftQuantity,
+  visibilityPeakRedshift,
+  visibilityPeakRedshiftQuantity,
+  visibilityQuantity,
+  visibilityWidth,
+  visibilityWidthQuantity,
+} from "./visibility";
