@@ -1,11 +1,14 @@
-import { lightSpeed, megaparsec } from "../constants";
-import { expansionPart, type ModelEvaluation, type ModelQuantity, requireRedshift } from "../expansion";
-import { hundredKmPerSecondPerMpc } from "../model";
-import { integrate, type NumericalResult } from "../numerics";
+import {
+  backgroundIntegral,
+  expansionPart,
+  type ModelEvaluation,
+  type ModelQuantity,
+  requireRedshift,
+  unitHubbleDistance,
+} from "../expansion";
+import type { NumericalResult } from "../numerics";
 import { redshiftArgument } from "../quantity";
-
-/** c/(100 km/s/Mpc) in Mpc: 2997.92458. */
-export const unitHubbleDistance = lightSpeed / hundredKmPerSecondPerMpc / megaparsec;
+import { redshiftPair } from "./redshiftPair";
 
 /**
  * Line-of-sight comoving distance D_C between two redshifts, Mpc.
@@ -17,15 +20,20 @@ export const unitHubbleDistance = lightSpeed / hundredKmPerSecondPerMpc / megapa
  * Source: Hogg 1999, eq. 15.
  * @example comovingDistance(evaluation, 0, 1.1).value
  */
-export function comovingDistance(evaluation: ModelEvaluation, from: number, to: number): NumericalResult {
-  requireRedshift(evaluation, Math.max(from, to), "comovingDistance");
+export function comovingDistance(
+  evaluation: ModelEvaluation,
+  from: number,
+  to: number,
+  where = "comovingDistance",
+): NumericalResult {
+  requireRedshift(evaluation, from, where);
+  requireRedshift(evaluation, to, where);
   const expansion = evaluation.once(expansionPart);
   const integrand = (s: number) => {
     const a = Math.exp(-s);
     return 1 / (a * expansion.rate(a));
   };
-  const result = integrate(integrand, Math.log1p(from), Math.log1p(to));
-  return { ...result, value: unitHubbleDistance * result.value, error: unitHubbleDistance * result.error };
+  return backgroundIntegral(where, unitHubbleDistance, integrand, Math.log1p(from), Math.log1p(to));
 }
 
 export const comovingDistanceQuantity: ModelQuantity = {
@@ -41,8 +49,3 @@ export const comovingDistanceQuantity: ModelQuantity = {
   sources: ["hogg1999"],
   compute: (evaluation, values) => comovingDistance(evaluation, ...redshiftPair(values)),
 };
-
-/** (z) stands for (0, z). */
-export function redshiftPair(values: readonly number[]): [number, number] {
-  return values.length === 2 ? [values[0]!, values[1]!] : [0, values[0]!];
-}

@@ -1,1 +1,13 @@
-export { comovingDistance, comovingDistanceQuantity, redshiftPair, unitHubbleDistance } from "./comovingDistance";
+export { unitHubbleDistance } from "../expansion";
+export { alcockPaczynskiRatio, alcockPaczynskiRatioQuantity } from "./alcockPaczynskiRatio";
+export { angularDiameterDistance, angularDiameterDistanceQuantity } from "./angularDiameterDistance";
+export { comovingDistance, comovingDistanceQuantity } from "./comovingDistance";
+export { comovingVolume, comovingVolumeQuantity } from "./comovingVolume";
+export { comovingVolumeElement, comovingVolumeElementQuantity } from "./comovingVolumeElement";
+export { distanceModulus, distanceModulusQuantity } from "./distanceModulus";
+export { hubbleDistance, hubbleDistanceQuantity } from "./hubbleDistance";
+export { luminosityDistance, luminosityDistanceQuantity } from "./luminosityDistance";
+export { properScale, properScaleQuantity } from "./properScale";
+export { redshiftPair } from "./redshiftPair";
+export { antipodeNote, curvaturePerArea, transverseDistance, transverseDistanceQuantity } from "./transverseDistance";
+export { volumeDistance, volumeDistanceQuantity } from "./volumeDistance";

@@ -1,4 +1,11 @@
+export { accelerationRedshift, accelerationRedshiftQuantity } from "./accelerationRedshift";
+export { backgroundIntegral } from "./backgroundIntegral";
+export { criticalDensity, criticalDensityQuantity } from "./criticalDensity";
 export { darkEnergyGrowth } from "./darkEnergyGrowth";
+export { decelerationAt, decelerationAtQuantity } from "./decelerationAt";
+export { equalityRedshift, equalityRedshiftQuantity } from "./equalityRedshift";
+export { equalityWavenumber, equalityWavenumberQuantity } from "./equalityWavenumber";
+export { equationOfStateAt, equationOfStateAtQuantity } from "./equationOfStateAt";
 export {
   Expansion,
   expansionPart,
@@ -8,11 +15,31 @@ export {
   turningRedshiftPart,
 } from "./expansion";
 export { fermiDiracEnergy, fermiDiracPressure } from "./fermiDirac";
+export {
+  baryonFractionAt,
+  baryonFractionAtQuantity,
+  coldMatterFractionAt,
+  coldMatterFractionAtQuantity,
+  curvatureFractionAt,
+  curvatureFractionAtQuantity,
+  darkEnergyFractionAt,
+  darkEnergyFractionAtQuantity,
+  matterFractionAt,
+  matterFractionAtQuantity,
+  neutrinoFractionAt,
+  neutrinoFractionAtQuantity,
+  photonFractionAt,
+  photonFractionAtQuantity,
+  radiationFractionAt,
+  radiationFractionAtQuantity,
+} from "./fractionsAt";
 export { hubbleRate, hubbleRateQuantity } from "./hubbleRate";
+export { unitHubbleDistance, unitHubbleTime } from "./hubbleUnits";
 export {
   massiveNeutrinoDensity,
   masslessSpeciesDensity,
   massToTemperature,
   neutrinoTemperature,
 } from "./neutrinoDensity";
-export { requireBigBang, requireRedshift } from "./requirePast";
+export { requireBigBang, requireFiniteStart, requireRedshift } from "./requirePast";
+export { turnaroundRedshiftPart } from "./turnaround";

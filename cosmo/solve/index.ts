@@ -1,1 +1,2 @@
 export { closeModel, type Origin } from "./closeModel";
+export { evaluateModel, ModelNumbers } from "./evaluateModel";

@@ -1,45 +1,15 @@
-import { gigayear } from "../constants";
-import { expansionPart, type ModelEvaluation, type ModelQuantity, requireBigBang } from "../expansion";
-import { hundredKmPerSecondPerMpc } from "../model";
-import { integrate, type NumericalResult } from "../numerics";
-import { redshiftArgument } from "../quantity";
-
-/** 1/(100 km/s/Mpc) in Gyr: 9.778. */
-export const unitHubbleTime = 1 / hundredKmPerSecondPerMpc / gigayear;
+import type { ModelEvaluation, ModelQuantity } from "../expansion";
+import type { NumericalResult } from "../numerics";
+import { ageAt } from "./ageAt";
 
 /**
- * Age of the universe at a redshift, Gyr, counted from a = 0 with no electron-positron era.
+ * Age of the universe today, Gyr: t_0 = int_0^1 da/(a H). As {@link ageAt} at redshift 0.
  *
- * t(z) = int_0^a da/(a H).
- *
- * @param z redshift above -1. A model without a Big Bang: NoAnswerError.
- * Method: adaptive Gauss-Kronrod in sqrt(a), in which the integrand is smooth from radiation to matter. Accuracy 1e-12.
- * Source: Hogg 1999, eq. 30.
- * @example ageAt(evaluation, 0).value // 13.8 near Planck's parameters
+ * @example age(evaluation).value // 13.8 near Planck's parameters
  */
-export function ageAt(evaluation: ModelEvaluation, z: number): NumericalResult {
-  requireBigBang(evaluation, "ageAt");
-  const expansion = evaluation.once(expansionPart);
-  const integrand = (root: number) => {
-    const a = root * root;
-    return (2 * a * root) / Math.sqrt(expansion.squaredTerm(a));
-  };
-  const result = integrate(integrand, 0, 1 / Math.sqrt(1 + z));
-  return { ...result, value: unitHubbleTime * result.value, error: unitHubbleTime * result.error };
+export function age(evaluation: ModelEvaluation): NumericalResult {
+  return ageAt(evaluation, 0, "age");
 }
-
-export const ageAtQuantity: ModelQuantity = {
-  name: "ageAt",
-  symbol: "t",
-  unit: "Gyr",
-  arguments: [redshiftArgument],
-  description: "Age of the universe at a redshift",
-  equation: String.raw`t(z) = \int_0^{1/(1+z)} \frac{da}{a H}`,
-  method: "adaptive Gauss-Kronrod quadrature in the square root of the scale factor",
-  accuracy: 1e-12,
-  sources: ["hogg1999"],
-  compute: (evaluation, [z]) => ageAt(evaluation, z!),
-};
 
 export const ageQuantity: ModelQuantity = {
   name: "age",
@@ -51,5 +21,5 @@ export const ageQuantity: ModelQuantity = {
   method: "adaptive Gauss-Kronrod quadrature in the square root of the scale factor",
   accuracy: 1e-12,
   sources: ["hogg1999"],
-  compute: (evaluation) => ageAt(evaluation, 0),
+  compute: (evaluation) => age(evaluation),
 };
