@@ -33,8 +33,8 @@ const kineticStart = { peebles: 2800 * 2.7255, calibrated: 3500 * 2.7255 };
 const heliumGone = -35;
 
 const tolerances = {
-  full: { hydrogen: 3e-11, temperature: 3e-11, helium: 3e-10 },
-  coarse: { hydrogen: 1e-8, temperature: 1e-8, helium: 1e-7 },
+  full: { hydrogen: 1e-10, temperature: 1e-10, helium: 1e-9 },
+  coarse: { hydrogen: 2e-9, temperature: 2e-9, helium: 2e-8 },
 };
 
 /** Settings of a tier of the three-level atom; other coefficients than the fitted ones serve the fit itself. */

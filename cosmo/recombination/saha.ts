@@ -37,8 +37,10 @@ export function sahaEquilibrium(
   const logHydrogen = Math.log(hydrogenDensity);
   // Pure hydrogen: x^2/(1 - x) = e^d, in a form without overflow.
   const d = saha.hydrogen - logHydrogen;
+  // With so few electrons x_e = e^(d/2) to the last digit, helium has none to add, and a search would run into underflow.
+  if (d < -100) return stateAt(logHydrogen + d / 2, saha, heliumRatio);
   const start = d > 0 ? 2 / (1 + Math.sqrt(1 + 4 * Math.exp(-d))) : sahaLowIonization(d);
-  let logElectrons = logHydrogen + (start > 0 ? Math.log(start) : d / 2);
+  let logElectrons = logHydrogen + Math.log(start);
   for (let iteration = 0; iteration < 200; iteration++) {
     const state = stateAt(logElectrons, saha, heliumRatio);
     const ratio = Math.exp(logElectrons - logHydrogen);
@@ -49,7 +51,8 @@ export function sahaEquilibrium(
     if (slope === 0) return state;
     const change = missing / slope;
     logElectrons -= change;
-    if (Math.abs(change) < 1e-14 * Math.max(1, Math.abs(logElectrons))) return stateAt(logElectrons, saha, heliumRatio);
+    // The exponent d itself is known to a rounding error of its own size.
+    if (Math.abs(change) < 1e-14 * Math.max(1, Math.abs(d))) return stateAt(logElectrons, saha, heliumRatio);
   }
   throw new NotConvergedError({ where: "saha", reason: `no electron density found at T = ${temperature} K` });
 }

@@ -66,7 +66,8 @@ export class ThreeLevelAtom {
     if (this.helium === "gone") return 0;
     if (this.helium === "kinetic") return 1 / (1 + Math.exp(-state[2]!));
     const onePlusRedshift = Math.exp(t);
-    const temperature = this.gas.temperature * onePlusRedshift * Math.exp(state[1]!);
+    // At T_r, so that the history joins the Saha equilibrium above its start without a step.
+    const temperature = this.gas.temperature * onePlusRedshift;
     return heliumWithHydrogen(hydrogen, temperature, this.gas.hydrogenDensity * onePlusRedshift ** 3, this.gas);
   }
 
