@@ -48,6 +48,8 @@ async function freePorts(count: number): Promise<number[]> {
 }
 
 export interface ExecuteOptions {
+  /** The id of the request, where the caller must know it before anything is published. */
+  id?: string;
   /** Milliseconds after which the code is interrupted. */
   timeout?: number | undefined;
   silent?: boolean;
@@ -221,8 +223,10 @@ export class KernelClient {
     type: string,
     content: JsonObject,
     channel: "shell" | "control" = "shell",
+    id?: string,
   ): Promise<{ id: string; reply: Promise<WireMessage>; idle: Promise<void> }> {
-    const header = this.codec.header(type);
+    const fresh = this.codec.header(type);
+    const header = id === undefined ? fresh : { ...fresh, msg_id: id };
     const message = { identities: [], header, parent: {}, metadata: {}, content, buffers: [] };
     const reply = new Promise<WireMessage>((resolve) => this.replies.set(header.msg_id, resolve));
     const idle = new Promise<void>((resolve) => this.idle.set(header.msg_id, resolve));
@@ -253,42 +257,45 @@ export class KernelClient {
     }
   }
 
-  /** Runs code, hands what it publishes to `listener`, and returns when the reply and the end of publishing are there. */
-  async execute(code: string, listener: Listener, options: ExecuteOptions = {}): Promise<ExecuteResult> {
-    const stop = this.onPublished(listener);
+  /** Runs code and returns when the reply and the end of publishing are there. */
+  async execute(code: string, options: ExecuteOptions = {}): Promise<ExecuteResult> {
+    const { timeout } = options;
     let timer: NodeJS.Timeout | undefined;
     let timedOut = false;
-    try {
-      const { reply, idle } = await this.send("execute_request", {
+    const { reply, idle } = await this.send(
+      "execute_request",
+      {
         code,
         silent: options.silent ?? false,
         store_history: options.storeHistory ?? true,
         user_expressions: options.userExpressions ?? {},
         allow_stdin: false,
         stop_on_error: options.stopOnError ?? true,
-      });
-      const { timeout } = options;
-      const late =
-        timeout === undefined
-          ? []
-          : [
-              new Promise<never>((_, reject) => {
-                timer = setTimeout(() => {
-                  timedOut = true;
-                  this.interrupt().catch(() => undefined);
-                  timer = setTimeout(
-                    () => reject(new KernelFailure("the kernel did not end the cell when it was interrupted")),
-                    interruptPatience,
-                  );
-                }, timeout);
-              }),
-            ];
-      const [answer] = await Promise.race([Promise.all([reply, idle]), ...late]);
+      },
+      "shell",
+      options.id,
+    );
+    const late = new Promise<never>((_, reject) => {
+      if (timeout === undefined) return;
+      timer = setTimeout(() => {
+        timedOut = true;
+        this.interrupt().catch(() => undefined);
+        const complaint = "the kernel did not end the cell when it was interrupted";
+        timer = setTimeout(() => reject(new KernelFailure(complaint)), interruptPatience);
+      }, timeout);
+    });
+    try {
+      const [answer] = await Promise.race([Promise.all([reply, idle]), late]);
       return { reply: answer, timedOut };
     } finally {
       clearTimeout(timer);
-      stop();
     }
+  }
+
+  /** What the kernel says about its language. */
+  async languageInfo(): Promise<JsonObject> {
+    const { content } = await this.request("kernel_info_request", {});
+    return content.language_info as JsonObject;
   }
 
   /** Interrupts what runs. */
@@ -313,6 +320,7 @@ export class KernelClient {
   async kill(): Promise<void> {
     this.closing = true;
     this.process.kill("SIGKILL");
+    this.fail?.(new KernelFailure("the kernel was ended"));
     await this.exit;
     this.cleanUp();
   }

@@ -167,7 +167,7 @@ export class CellRunner {
     try {
       const completed = await this.apart(run, () => this.executor.execute(code));
       if (run.diagnostics.length > 0) {
-        return { error: describeDiagnostics(run.diagnostics, `cell ${run.context.count}`, this.sources) };
+        return { error: describeDiagnostics(run.diagnostics, `cell [${run.context.count}]`, this.sources) };
       }
       if (run.thrown) return { error: describeThrown(run.thrown.value, this.sources) };
       if (!completed) throw new Error("the cell did not complete");

@@ -3,7 +3,7 @@ import type { CompiledFile } from "./compiler";
 
 /** Where something is, lines and columns counted from one. */
 export interface SourcePlace {
-  /** "cell 3" or the name of a file. */
+  /** "cell [3]", by its execution count, or the name of a file. */
   name: string;
   line: number;
   column: number;
@@ -35,7 +35,7 @@ export class CellSources {
   /** Remembers a cell before it is compiled. */
   addCell(count: number, text: string): void {
     this.known.set(cellFileName(count), {
-      name: `cell ${count}`,
+      name: `cell [${count}]`,
       text: text.split("\n"),
       lead: cellLead,
       compiled: undefined,

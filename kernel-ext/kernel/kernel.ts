@@ -357,7 +357,7 @@ export class Kernel {
 
   /** Reports a failure of a cell's code that came after the cell's end, in that cell. */
   private late(thrown: unknown, context: CellContext): void {
-    const error = describeThrown(thrown, this.parts.runner.sources, `(after cell ${context.count} had ended)`);
+    const error = describeThrown(thrown, this.parts.runner.sources, `(after cell [${context.count}] had ended)`);
     if (!context.silent) this.publishError(error, context.parent);
   }
 
