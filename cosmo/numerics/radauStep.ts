@@ -47,7 +47,6 @@ export class RadauStep {
   private readonly n: number;
   private readonly slope: Float64Array;
   private readonly jacobian: Float64Array;
-  private jacobianIsFresh = false;
   private factoredStep = 0;
   private contraction = 1;
   private rate = 1;
@@ -167,7 +166,6 @@ export class RadauStep {
       point[j] = held;
     }
     this.evaluations += n;
-    this.jacobianIsFresh = true;
     this.factoredStep = 0;
   }
 
@@ -223,20 +221,19 @@ export class RadauStep {
 
   /** Finds the stages of a step of size h; false if Newton's iteration does not converge (see `reduction`). */
   attempt(h: number): boolean {
-    if (!this.jacobianIsFresh && !(this.rate <= KEEP_JACOBIAN)) this.linearize(h);
     this.reduction = 0.5;
-    for (;;) {
-      if ((this.factoredStep === h || this.factor(h)) && this.iterate(h)) return true;
-      if (this.jacobianIsFresh) {
-        this.rate = 1;
-        return false;
-      }
-      this.linearize(h);
-    }
+    if (this.rate <= KEEP_JACOBIAN && (this.factoredStep === h || this.factor(h)) && this.iterate(h)) return true;
+    this.linearize(h);
+    if (this.factor(h) && this.iterate(h)) return true;
+    // The next attempt takes the Jacobian anew, in the middle of a shorter step.
+    this.rate = 1;
+    return false;
   }
 
   private iterate(h: number): boolean {
-    const { n, t, y, z, w, stageSlopes, change, point, tolerance } = this;
+    const { n, t, y, z, w, stageSlopes, point, tolerance } = this;
+    const [change0, change1, change2, change3, change4] = this.change;
+    const T = transformation;
     this.predict(h);
     let eta = Math.max(this.contraction, Number.EPSILON) ** 0.8;
     let normBefore = 0;
@@ -253,14 +250,25 @@ export class RadauStep {
       this.solveForChange(h);
       let norm = 0;
       for (let c = 0; c < n; c++) {
-        const scale = Math.max(NEWTON_PART * tolerance[c], 8 * Number.EPSILON * Math.abs(y[c]));
-        for (let i = 0; i < STAGES; i++) {
-          let sum = 0;
-          for (let j = 0; j < STAGES; j++) sum += transformation[i * STAGES + j] * change[j][c];
+        const d0 = change0[c];
+        const d1 = change1[c];
+        const d2 = change2[c];
+        const d3 = change3[c];
+        const d4 = change4[c];
+        w[c] += d0;
+        w[n + c] += d1;
+        w[2 * n + c] += d2;
+        w[3 * n + c] += d3;
+        w[4 * n + c] += d4;
+        let largest = 0;
+        for (let i = 0, at = 0; i < STAGES; i++, at += STAGES) {
+          const sum = T[at] * d0 + T[at + 1] * d1 + T[at + 2] * d2 + T[at + 3] * d3 + T[at + 4] * d4;
           z[i * n + c] += sum;
-          w[i * n + c] += change[i][c];
-          norm = Math.max(norm, Math.abs(sum) / scale);
+          // Written so that NaN is kept.
+          if (!(Math.abs(sum) <= largest)) largest = Math.abs(sum);
         }
+        largest /= Math.max(NEWTON_PART * tolerance[c], 8 * Number.EPSILON * Math.abs(y[c]));
+        if (!(largest <= norm)) norm = largest;
       }
       if (!(norm < Number.POSITIVE_INFINITY)) return false;
       if (iteration > 1) {
@@ -291,21 +299,31 @@ export class RadauStep {
 
   /** One linear solve of the simplified Newton iteration, in the transformed variables; the result is in `change`. */
   private solveForChange(h: number): void {
-    const { n, w, stageSlopes, change } = this;
+    const { n, w, change } = this;
+    const [slopes0, slopes1, slopes2, slopes3, slopes4] = this.stageSlopes;
+    const [change0, change1, change2, change3, change4] = change;
+    const T = inverseTransformation;
+    const inverse = 1 / h;
+    const gamma = realEigenvalue * inverse;
+    const alpha1 = complexEigenvalues[0].alpha * inverse;
+    const beta1 = complexEigenvalues[0].beta * inverse;
+    const alpha2 = complexEigenvalues[1].alpha * inverse;
+    const beta2 = complexEigenvalues[1].beta * inverse;
     for (let c = 0; c < n; c++) {
-      for (let i = 0; i < STAGES; i++) {
-        let sum = 0;
-        for (let j = 0; j < STAGES; j++) sum += inverseTransformation[i * STAGES + j] * stageSlopes[j][c];
-        change[i][c] = sum;
-      }
-      change[0][c] -= (realEigenvalue / h) * w[c];
-      for (let p = 0; p < 2; p++) {
-        const { alpha, beta } = complexEigenvalues[p];
-        const first = w[(1 + 2 * p) * n + c];
-        const second = w[(2 + 2 * p) * n + c];
-        change[1 + 2 * p][c] -= (alpha * first + beta * second) / h;
-        change[2 + 2 * p][c] -= (alpha * second - beta * first) / h;
-      }
+      const s0 = slopes0[c];
+      const s1 = slopes1[c];
+      const s2 = slopes2[c];
+      const s3 = slopes3[c];
+      const s4 = slopes4[c];
+      const w1 = w[n + c];
+      const w2 = w[2 * n + c];
+      const w3 = w[3 * n + c];
+      const w4 = w[4 * n + c];
+      change0[c] = T[0] * s0 + T[1] * s1 + T[2] * s2 + T[3] * s3 + T[4] * s4 - gamma * w[c];
+      change1[c] = T[5] * s0 + T[6] * s1 + T[7] * s2 + T[8] * s3 + T[9] * s4 - (alpha1 * w1 + beta1 * w2);
+      change2[c] = T[10] * s0 + T[11] * s1 + T[12] * s2 + T[13] * s3 + T[14] * s4 - (alpha1 * w2 - beta1 * w1);
+      change3[c] = T[15] * s0 + T[16] * s1 + T[17] * s2 + T[18] * s3 + T[19] * s4 - (alpha2 * w3 + beta2 * w4);
+      change4[c] = T[20] * s0 + T[21] * s1 + T[22] * s2 + T[23] * s3 + T[24] * s4 - (alpha2 * w4 - beta2 * w3);
     }
     solveReal(this.real, n, this.pivots[0], change[0]);
     solveComplex(this.complexRe[0], this.complexIm[0], n, this.pivots[1], change[1], change[2]);
@@ -351,6 +369,7 @@ export class RadauStep {
     const { n, z, errors, meshErrors, interiorErrors, tolerance } = this;
     this.findBubbles(h);
     let worst = 0;
+    let worstBetween = 0;
     for (let c = 0; c < n; c++) {
       const embedded = Math.abs(errors[c]);
       let largest = 0;
@@ -362,12 +381,12 @@ export class RadauStep {
       meshErrors[c] = atMesh;
       interiorErrors[c] =
         LARGEST_SLOPE_BUBBLE * realEigenvalue * embedded + LARGEST_STAGE_BUBBLE * Math.abs(this.stageBubbles[c]);
-      // The polynomial's error goes like h^6.
-      const between = (interiorErrors[c] / (this.interior * tolerance[c])) ** (10 / 6);
-      const measure = Math.max(atMesh / tolerance[c], between);
-      if (!(measure <= worst)) worst = measure;
+      const between = interiorErrors[c] / (this.interior * tolerance[c]);
+      if (!(atMesh / tolerance[c] <= worst)) worst = atMesh / tolerance[c];
+      if (!(between <= worstBetween)) worstBetween = between;
     }
-    return worst;
+    // The polynomial's error goes like h^6.
+    return Math.max(worst, worstBetween ** (10 / 6));
   }
 
   /**
@@ -415,7 +434,6 @@ export class RadauStep {
     this.stepBefore = h;
     this.t = end;
     record.push(end, y, z, this.slopeBubbles, this.stageBubbles);
-    this.jacobianIsFresh = false;
     if (!this.refreshSlope()) {
       throw new NotConvergedError({
         where: "solveStiff",

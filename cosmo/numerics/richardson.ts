@@ -51,10 +51,10 @@ export function richardsonDerivative(f: (x: number) => number, x: number, step: 
     for (let j = 0; j < level; j++) {
       power *= SHRINK * SHRINK;
       const left = entry;
-      const above = row[j];
-      entry = left + (left - above) / (power - 1);
+      const previous = row[j];
+      entry = left + (left - previous) / (power - 1);
       row[j] = left;
-      const estimate = Math.max(Math.abs(entry - left), Math.abs(entry - above)) + 2 * roundOff;
+      const estimate = Math.max(Math.abs(entry - left), Math.abs(entry - previous)) + 2 * roundOff;
       bestOfRow = Math.min(bestOfRow, estimate);
       if (estimate < error) {
         error = estimate;

@@ -104,7 +104,8 @@ export function solveStiff(system: StiffSystem, options: StiffOptions): StiffSol
     if (!(error <= 1)) {
       record.rejected++;
       refused = true;
-      h *= Math.max(0.1, Math.min(0.9, factor));
+      // A measure that is NaN shortens the step as far as it goes.
+      h *= factor > 0.1 ? Math.min(0.9, factor) : 0.1;
       continue;
     }
     if (record.steps > 0) {
