@@ -1,0 +1,44 @@
+import type { ClosedModel } from "../../cosmo/model";
+import { formatNumber, symbolText, type Table, type TableRow, table } from "../display";
+
+/**
+ * The closed model: parameters, and the conventions that published numbers differ by. Printed with every result.
+ *
+ * @param tiers the recombination tiers that the cell ran, where it ran several.
+ */
+export function modelTable(model: ClosedModel, tiers: readonly string[] = [model.recombination]): Table {
+  const { w0, wa } = model.darkEnergy;
+  const masses = model.neutrinos.masses.length === 0 ? "0" : model.neutrinos.masses.map(exact).join(", ");
+  const rows: TableRow[] = [
+    { field: "hubble", symbol: "H_0", value: exact(model.hubble), unit: "km/s/Mpc" },
+    { field: "baryonDensity", symbol: "omega_b", value: exact(model.baryonDensity), unit: "" },
+    { field: "coldMatterDensity", symbol: "omega_c", value: exact(model.coldMatterDensity), unit: "" },
+    { field: "matterFraction", symbol: "Omega_m", value: exact(model.matterFraction), unit: "" },
+    { field: "darkEnergyFraction", symbol: "Omega_DE", value: exact(model.darkEnergyFraction), unit: "" },
+    { field: "curvature", symbol: "Omega_k", value: exact(model.curvature), unit: "" },
+    { field: "darkEnergy.w0; darkEnergy.wa", symbol: "w_0, w_a", value: `${exact(w0)}, ${exact(wa)}`, unit: "" },
+    { field: "neutrinos.effectiveNumber", symbol: "N_eff", value: exact(model.neutrinos.effectiveNumber), unit: "" },
+    { field: "neutrinos.masses", symbol: "m_nu", value: masses, unit: "eV" },
+    { field: "photonTemperature", symbol: "T_cmb", value: exact(model.photonTemperature), unit: "K" },
+    { field: `helium (${model.heliumSource})`, symbol: "Y_p", value: exact(model.helium), unit: "" },
+  ];
+  return table({
+    title: "Model",
+    columns: [
+      { key: "field", label: "parameter" },
+      { key: "symbol", label: "symbol", format: (symbol) => symbolText(String(symbol)) },
+      { key: "value", label: "value", align: "right" },
+      { key: "unit", label: "unit", format: (unit) => String(unit) },
+    ],
+    rows,
+    notes: [
+      `conventions: constants ${model.conventions.constants}, closure ${model.conventions.closure}, equalityMatter ${model.conventions.equalityMatter}, recombination ${tiers.join(", ")}`,
+    ],
+  });
+}
+
+/** Givens at the digits they were given with, derived ones at eight. */
+function exact(value: number): string {
+  const shortest = formatNumber(value, { digits: "all" });
+  return shortest.length <= 11 ? shortest : formatNumber(value, { digits: 8 });
+}
