@@ -7,12 +7,14 @@ const zeta3 = 1.2020569031595942;
 const zeta5 = 1.03692775514337;
 const zeta7 = 1.008349277381923;
 const zeta9 = 1.002008392826082;
+const zeta11 = 1.000494188604119;
 
-/** int x^n/(e^x + 1) dx for n = 2, 4, 6, 8: (1 - 2^-n) n! zeta(n + 1). */
+/** int x^n/(e^x + 1) dx for n = 2, 4, 6, 8, 10: (1 - 2^-n) n! zeta(n + 1). */
 const moment2 = 1.5 * zeta3;
 const moment4 = 22.5 * zeta5;
 const moment6 = 708.75 * zeta7;
 const moment8 = (1 - 2 ** -8) * 40320 * zeta9;
+const moment10 = (1 - 2 ** -10) * 3628800 * zeta11;
 
 /**
  * The substitution x = e^s makes every singularity of the integrands (x = +- i y, x = +- i pi, ...) lie pi/2 off the real axis of
@@ -38,7 +40,7 @@ function pressureByQuadrature(y: number): number {
   return trapezoid((x) => x ** 4 / Math.hypot(x, y)) / masslessIntegral;
 }
 
-// Below y = e^-9 two terms of the small-mass series suffice, above e^7 three of the large-mass series; both to 1e-15.
+// Below y = e^-9 two terms of the small-mass series suffice, above e^7 four of the large-mass series; both to 1e-15.
 const lowest = -9;
 const highest = 7;
 const layout = { pieces: 32, degree: 15 };
@@ -62,7 +64,7 @@ export function fermiDiracEnergy(y: number): number {
   if (s < lowest) return 1 + (5 / (7 * Math.PI * Math.PI)) * y * y;
   if (s >= highest) {
     const q = 1 / (y * y);
-    return (y * (moment2 + q * (moment4 / 2 - (q * moment6) / 8))) / masslessIntegral;
+    return (y * (moment2 + q * (moment4 / 2 - q * (moment6 / 8 - (q * moment8) / 16)))) / masslessIntegral;
   }
   energyTable ??= buildChebyshev((t) => energyByQuadrature(Math.exp(t)), lowest, highest, layout);
   return energyTable.evaluate(s);
@@ -82,7 +84,7 @@ export function fermiDiracPressure(y: number): number {
   if (s < lowest) return 1 - (5 / (7 * Math.PI * Math.PI)) * y * y;
   if (s >= highest) {
     const q = 1 / (y * y);
-    return (moment4 - q * (moment6 / 2 - (q * 3 * moment8) / 8)) / y / masslessIntegral;
+    return (moment4 - q * (moment6 / 2 - q * ((3 * moment8) / 8 - (5 * q * moment10) / 16))) / y / masslessIntegral;
   }
   pressureTable ??= buildChebyshev((t) => pressureByQuadrature(Math.exp(t)), lowest, highest, layout);
   return pressureTable.evaluate(s);
