@@ -94,13 +94,15 @@ export class CellResult<V = undefined> implements Displayable {
     }
     for (const table of this.tables) parts.push(table.toHtmlBody());
     if (this.notes.length > 0) {
+      parts.push('<p class="cell-label">Notes</p>');
       parts.push(`<ul class="cell-notes">${this.notes.map((note) => `<li>${escapeHtml(note)}</li>`).join("")}</ul>`);
     }
     if (this.sources.length > 0) {
       const lines = this.sources.map(
         ({ key, citation }) => `<li><code>${escapeHtml(key)}</code> ${escapeHtml(citation)}</li>`,
       );
-      parts.push(`<p class="cell-sources-title">Sources</p>\n<ul class="cell-sources">${lines.join("")}</ul>`);
+      parts.push('<p class="cell-label">Sources</p>');
+      parts.push(`<ul class="cell-sources">${lines.join("")}</ul>`);
     }
     return `<div class="cell-output">\n${outputStyle}\n${parts.join("\n")}\n</div>`;
   }

@@ -113,6 +113,7 @@ function fill(count: number, withPoint: boolean): string {
 function htmlCells({ cells, align }: FormattedColumn): string[] {
   if (align !== "point") return cells.map(escapeHtml);
   return alignOnPoint(cells).map(({ text, after }) => {
+    if (text === missingMark) return text;
     const bare = !text.includes(".") && !text.includes("\u00b1");
     return escapeHtml(text) + fill(after, bare);
   });
@@ -122,7 +123,10 @@ function htmlCells({ cells, align }: FormattedColumn): string[] {
 function textCells({ cells, align }: FormattedColumn, head: string): string[] {
   const lined =
     align === "point"
-      ? alignOnPoint(cells).map(({ text, before, after }) => " ".repeat(before) + text + " ".repeat(after))
+      ? alignOnPoint(cells).map(({ text, before, after }) => {
+          const width = before + textWidth(text) + after;
+          return text === missingMark ? padTo(text, width, "center") : " ".repeat(before) + text + " ".repeat(after);
+        })
       : [...cells];
   const width = Math.max(textWidth(head), ...lined.map(textWidth));
   const side = align === "point" || align === "right" ? "right" : align;
@@ -192,8 +196,9 @@ export function table(options: TableOptions): Table {
       .join("");
     const body = shown.map((_, position) => {
       const line = formatted
-        .map(({ align }, number) => {
+        .map(({ align: side, cells: plain }, number) => {
           const content = cells[number]?.[position] ?? "";
+          const align = side === "point" && plain[position] === missingMark ? "center" : side;
           return number === 0
             ? `<th scope="row" class="cell-${align}">${content}</th>`
             : `<td class="cell-${align}">${content}</td>`;

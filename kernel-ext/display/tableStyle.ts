@@ -22,9 +22,10 @@ const rules = [
   ".cell-output .cell-unit{font-weight:400;white-space:nowrap}",
   ".cell-output .cell-symbol{font-style:italic;font-weight:400;white-space:nowrap}",
   ".cell-output sub,.cell-output sup{font-size:.75em;line-height:0}",
-  ".cell-output ul.cell-notes{list-style:none;margin:.2em 0 .8em;padding:0 0 0 .8em;border-left:2px solid;font-size:.93em}",
-  ".cell-output ul.cell-notes li{margin:.1em 0;padding:0}",
-  ".cell-output ol.cell-sources{margin:.2em 0 .4em;padding:0 0 0 1.4em;font-size:.9em}",
+  ".cell-output p.cell-label{font-weight:600;font-size:.93em;margin:.8em 0 .1em}",
+  ".cell-output ul.cell-notes,.cell-output ul.cell-sources{list-style:none;margin:0 0 .6em;padding:0;font-size:.93em;max-width:60em}",
+  ".cell-output ul.cell-notes li,.cell-output ul.cell-sources li{margin:.15em 0;padding:0}",
+  ".cell-output code{font-size:.95em;background:none;padding:0;color:inherit}",
   ".cell-output img.cell-chart{max-width:100%;height:auto;display:block;margin:.4em 0}",
 ];
 

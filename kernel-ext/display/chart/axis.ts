@@ -2,7 +2,7 @@
  * Axes: what they measure, the range they cover, and how a value becomes a place on the page. The same arithmetic gives
  * the Vega-Lite scale and the pixels by which labels are kept apart.
  */
-import { quantityText } from "../symbol";
+import { quantityText, symbolText } from "../symbol";
 import { labelExpression, linearTicks, logTicks, type Ticks, tickStep } from "./ticks";
 
 /** What an axis measures. */
@@ -41,7 +41,7 @@ export interface SettledAxis {
 }
 
 function titleOf(axis: ChartAxis): string {
-  if (axis.scale === "onePlusRedshift") return quantityText("", `1+${axis.symbol ?? "z"}`);
+  if (axis.scale === "onePlusRedshift") return `1 + ${symbolText(axis.symbol ?? "z")}`;
   return quantityText(axis.label, axis.symbol, axis.unit);
 }
 

@@ -1,9 +1,10 @@
 /**
- * Reference lines and bands with their names. Names of upright ones stand above the plot, in as many rows as it takes to
- * keep them apart; names of level ones inside it, at the right.
+ * Reference lines and bands with their names. Names of upright ones stand above the plot like flags at their poles, kept
+ * apart from each other; names of level ones at its right.
  */
 import { symbolText } from "../symbol";
 import { positionEncoding, type SettledAxis } from "./axis";
+import { type LabelPlace, placeLabels } from "./labelPlaces";
 import { ink } from "./palette";
 import { estimatedWidth } from "./textWidth";
 
@@ -34,6 +35,14 @@ export interface PlotFrame {
   readonly xLabelled: boolean;
 }
 
+/** A name above the plot, with its rule, or without one for a band. */
+interface UprightGuide {
+  readonly text: string;
+  /** Pixels from the left of the plot. */
+  readonly middle: number;
+  readonly rule: Record<string, unknown> | undefined;
+}
+
 const rowHeight = 15;
 
 /** The encodings that every layer of a plot names, so that all share one pair of axes. */
@@ -59,7 +68,7 @@ export function guideLayers(
 ): { below: Record<string, unknown>[]; above: Record<string, unknown>[] } {
   const below: Record<string, unknown>[] = [];
   const above: Record<string, unknown>[] = [];
-  const upright: { text: string; middle: number; rule: Record<string, unknown> | undefined }[] = [];
+  const upright: UprightGuide[] = [];
   const level: { text: string; down: number }[] = [];
   for (const { axis: side, from, to, label } of bands) {
     const axis = side === "x" ? frame.x : frame.y;
@@ -78,7 +87,7 @@ export function guideLayers(
     const pixels = ends.map((end) => axis.pixel(end, length, side === "y"));
     const middle = ((pixels[0] as number) + (pixels[1] as number)) / 2;
     if (side === "x") upright.push({ text: symbolText(label), middle, rule: undefined });
-    else level.push({ text: symbolText(label), down: Math.min(...pixels) + rowHeight });
+    else level.push({ text: symbolText(label), down: middle });
   }
   for (const { axis: side, at, label } of rules) {
     const axis = side === "x" ? frame.x : frame.y;
@@ -103,59 +112,47 @@ export function guideLayers(
   return { below, above };
 }
 
-/** Names above the plot: each in the lowest row where it touches no other. */
-function uprightLayers(
-  frame: PlotFrame,
-  guides: { text: string; middle: number; rule: Record<string, unknown> | undefined }[],
-  named: boolean,
-): Record<string, unknown>[] {
-  const rows: { from: number; to: number }[][] = [];
-  return [...guides]
-    .sort((one, other) => one.middle - other.middle)
-    .flatMap(({ text, middle, rule }) => {
-      const half = estimatedWidth(text, 12) / 2;
-      const center = Math.min(Math.max(middle, half), Math.max(half, frame.width - half));
-      const span = { from: center - half - 5, to: center + half + 5 };
-      // A name may not lie on the line of another rule that runs up to a higher row.
-      let row = rows.findIndex((taken) => taken.every((other) => span.to <= other.from || span.from >= other.to));
-      if (row < 0) row = rows.push([]) - 1;
-      if (!named) row = 0;
-      (rows[row] as { from: number; to: number }[]).push(span);
-      const top = named ? -4 - row * rowHeight : 0;
-      const layers: Record<string, unknown>[] = [];
-      if (rule !== undefined) {
-        const encoding = { ...(rule["encoding"] as object), y: { value: top }, y2: { value: frame.height } };
-        layers.push({ ...rule, encoding });
-      }
-      if (named) {
-        layers.push({
-          data: { values: [{ text }] },
-          mark: { type: "text", align: "center", baseline: "bottom" },
-          encoding: { x: { value: round(center) }, y: { value: top - 1 }, text: { field: "text" } },
-        });
-      }
-      return layers;
-    });
+/** Rules with their names above the plot, and names of bands. */
+function uprightLayers(frame: PlotFrame, guides: readonly UprightGuide[], named: boolean): Record<string, unknown>[] {
+  const labels = guides.map(({ text, middle, rule }) => ({
+    width: estimatedWidth(text, 12),
+    at: middle,
+    pole: rule !== undefined,
+  }));
+  const places = placeLabels(labels, frame.width);
+  return guides.flatMap(({ text, rule }, index) => {
+    const { from, row } = places[index] as LabelPlace;
+    const top = named ? -4 - row * rowHeight : 0;
+    const layers: Record<string, unknown>[] = [];
+    if (rule !== undefined) {
+      const pole = named ? top - rowHeight + 2 : 0;
+      const encoding = { ...(rule["encoding"] as object), y: { value: pole }, y2: { value: frame.height } };
+      layers.push({ ...rule, encoding });
+    }
+    if (named) {
+      layers.push({
+        data: { values: [{ text }] },
+        mark: { type: "text", align: "left", baseline: "bottom" },
+        encoding: { x: { value: round(from) }, y: { value: top }, text: { field: "text" } },
+      });
+    }
+    return layers;
+  });
 }
 
-/** Names of level guides, at the right and above their line; at the left when the right is taken. */
+/** Names of level guides, at the right of the plot beside their line, pushed apart where they would touch. */
 function levelLayers(frame: PlotFrame, guides: readonly { text: string; down: number }[]): Record<string, unknown>[] {
-  const taken: { down: number; side: string }[] = [];
-  return guides.map(({ text, down }) => {
-    const free = (side: string): boolean =>
-      taken.every((other) => other.side !== side || Math.abs(other.down - down) >= rowHeight);
-    const side = free("right") || !free("left") ? "right" : "left";
-    taken.push({ down, side });
-    return {
-      data: { values: [{ text }] },
-      mark: { type: "text", align: side, baseline: "bottom" },
-      encoding: {
-        x: { value: side === "right" ? frame.width - 4 : 4 },
-        y: { value: round(down < rowHeight ? down + rowHeight : down - 3) },
-        text: { field: "text" },
-      },
-    };
-  });
+  let last = Number.NEGATIVE_INFINITY;
+  return [...guides]
+    .sort((one, other) => one.down - other.down)
+    .map(({ text, down }) => {
+      last = Math.max(down, last + rowHeight);
+      return {
+        data: { values: [{ text }] },
+        mark: { type: "text", align: "left", baseline: "middle" },
+        encoding: { x: { value: frame.width + 6 }, y: { value: round(last) }, text: { field: "text" } },
+      };
+    });
 }
 
 function round(pixels: number): number {

@@ -2,7 +2,7 @@
  * The key of a chart: above the plot, in as many rows as the names need, each name after a piece of its line with its
  * point. Vega's own legends cannot show dash and shape in one sample.
  */
-import { visibleText } from "../escape";
+import { symbolText } from "../symbol";
 import type { SeriesLook } from "./palette";
 import { estimatedWidth } from "./textWidth";
 
@@ -24,8 +24,8 @@ export function keyView(entries: readonly KeyEntry[], width: number): Record<str
   let left = 0;
   let row = 0;
   const placed = entries.map((entry) => {
-    const text = visibleText(entry.label);
-    const needed = sampleWidth + 8 + estimatedWidth(text, 12);
+    const text = symbolText(entry.label);
+    const needed = Math.ceil(sampleWidth + 8 + estimatedWidth(text, 12));
     if (left > 0 && left + needed > width) {
       left = 0;
       row += 1;

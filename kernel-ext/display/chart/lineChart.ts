@@ -133,7 +133,9 @@ function looksOf(panels: readonly ChartPanel[]): Map<string, SeriesLook> {
   return new Map([...labels].map((label, index) => [label, seriesLook(index)]));
 }
 
+/** The names for the key; none where each panel has one series, which its axis names. */
 function keyEntries(panels: readonly ChartPanel[], looks: ReadonlyMap<string, SeriesLook>): KeyEntry[] {
+  if (panels.every((panel) => allSeries(panel).length === 1)) return [];
   const lines = new Set(panels.flatMap((panel) => (panel.series ?? []).map((series) => series.label)));
   return [...looks].map(([label, look]) => ({ label, look, line: lines.has(label), filled: lines.has(label) }));
 }

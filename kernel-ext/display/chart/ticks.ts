@@ -39,7 +39,7 @@ export function linearTicks(low: number, high: number, count = 6): Ticks {
     return { values, labels: values.map((value) => powerLabel((value / unit).toFixed(decimals), power, value === 0)) };
   }
   const decimals = Math.max(0, -Math.floor(Math.log10(step) + 1e-9));
-  return { values, labels: values.map((value) => grouped(value.toFixed(decimals))) };
+  return { values, labels: values.map((value) => (value === 0 ? "0" : grouped(value.toFixed(decimals)))) };
 }
 
 /** Ticks of a logarithmic axis; `high > low > 0`. */
@@ -58,13 +58,14 @@ export function logTicks(low: number, high: number, count = 8): Ticks {
       if (value >= low * (1 - 1e-9) && value <= high * (1 + 1e-9)) values.push(value);
     }
   }
-  return { values, labels: values.map(logLabel) };
+  const plain = values.every((value) => value > 0.9e-3 && value < 1.1e4);
+  return { values, labels: values.map((value) => logLabel(value, plain)) };
 }
 
-/** A tick of a logarithmic axis: plain from 0.001 to 10000, a power of ten beyond. */
-function logLabel(value: number): string {
+/** A tick of a logarithmic axis: plain where all are handy, otherwise powers of ten but for 0.1 to 100. */
+function logLabel(value: number, plain: boolean): string {
   const power = Math.floor(Math.log10(value) + 1e-9);
-  if (power >= -3 && power <= 4) return grouped(String(value));
+  if (plain || (power >= -1 && power <= 2)) return grouped(String(value));
   return powerLabel(String(Math.round(value / 10 ** power)), power, false);
 }
 
@@ -77,8 +78,7 @@ function powerLabel(mantissa: string, power: number, zero: boolean): string {
 function grouped(plain: string): string {
   const [whole, fraction] = plain.replace("-", "\u2212").split(".") as [string, string?];
   const spaced = whole.length < 5 ? whole : whole.replace(/\B(?=(\d{3})+$)/g, "\u202f");
-  const value = fraction === undefined ? spaced : `${spaced}.${fraction}`;
-  return /^\u2212[0.]*$/.test(value) ? value.slice(1) : value;
+  return fraction === undefined ? spaced : `${spaced}.${fraction}`;
 }
 
 /** The Vega expression that gives a tick value its label. */
