@@ -1,0 +1,7 @@
+export { type ParsedNumber, parseNumber } from "./parseNumber";
+export { type OpenedFile, openFile } from "./readFile";
+export { type RowProblem, shownPiece, TableError, type TableErrorFields } from "./tableError";
+export { formatByName, formatOfFile, knownFormats, type TableFormat } from "./tableFormat";
+export { type CellValue, openTable, type TableReader, type TableRow } from "./tableReader";
+export { roundDigits, type TableWriter, tableWriter } from "./tableWriter";
+export { ClosedPipeError, fileReason, openStream, type TextSink, wholeFile } from "./wholeFile";
