@@ -94,8 +94,8 @@ function truncation(coefficients: Float64Array, at: number, degree: number): num
   const last = Math.max(size(degree), size(degree - 1));
   const before = Math.max(size(degree - 2), size(degree - 3));
   const ratio = Math.min(0.9, before > 0 ? last / before : 0);
-  // Two coefficients a ratio; what is cut off is also folded back; and a factor of 2 for a ratio that is not steady.
-  return (8 * last * Math.max(ratio, 0.05)) / (1 - ratio);
+  // Two coefficients fall by one ratio, and what is cut off is also folded back.
+  return (4 * last * Math.max(ratio, 0.002)) / (1 - ratio);
 }
 
 /** A function as Chebyshev polynomials on pieces of equal width; made by `buildChebyshev`. */
@@ -137,7 +137,7 @@ export class PiecewiseChebyshev {
     return this.sum(this.coefficients, x);
   }
 
-  /** Its derivative at x; about two digits less accurate than the function. */
+  /** Its derivative at x; round-off grows with the square of the degree over the width of a piece. */
   derivative(x: number): number {
     return this.sum(this.slopes, x);
   }

@@ -16,7 +16,7 @@ const SHRINK = 1.5;
  * @returns the derivative; `converged` is true if the error estimate is below 1e-6 of the derivative or of max |f| / step
  *
  * Method: steps shrink by 1.5, each row of the table removes one more power of h^2; the entry with the least error estimate
- * (difference from its two parents, plus the round-off of its row) is returned, and the table ends when the
+ * (twice the difference from its two parents, plus the round-off of its row) is returned, and the table ends when the
  * estimates rise.
  * Accuracy: 1e-12 to 1e-13 relative for an analytic f whose nearest pole is a few steps away; see the tests.
  * Source: Ridders 1982, Adv. Eng. Software 4, 75.
@@ -44,8 +44,10 @@ export function richardsonDerivative(f: (x: number) => number, x: number, step: 
     const fBelow = sample(f, below);
     evaluations += 2;
     largest = Math.max(largest, Math.abs(fAbove), Math.abs(fBelow));
-    const roundOff = (Number.EPSILON * (Math.abs(fAbove) + Math.abs(fBelow))) / (above - below);
     let entry = (fAbove - fBelow) / (above - below);
+    // Of the values and, through the slope, of the arguments.
+    const rounding = Math.abs(fAbove) + Math.abs(fBelow) + (Math.abs(above) + Math.abs(below)) * Math.abs(entry);
+    const roundOff = (Number.EPSILON * rounding) / (above - below);
     let power = 1;
     let bestOfRow = Number.POSITIVE_INFINITY;
     for (let j = 0; j < level; j++) {
@@ -54,7 +56,7 @@ export function richardsonDerivative(f: (x: number) => number, x: number, step: 
       const previous = row[j];
       entry = left + (left - previous) / (power - 1);
       row[j] = left;
-      const estimate = Math.max(Math.abs(entry - left), Math.abs(entry - previous)) + 2 * roundOff;
+      const estimate = 2 * Math.max(Math.abs(entry - left), Math.abs(entry - previous)) + 2 * roundOff;
       bestOfRow = Math.min(bestOfRow, estimate);
       if (estimate < error) {
         error = estimate;
