@@ -15,7 +15,7 @@ const SMALL_ARGUMENT = 1e-3;
  * Arguments that are not finite, and sqrt(-k) x so large that sinh overflows, throw DomainError.
  *
  * Method: closed form; the series in k x^2 below 1e-3.
- * Accuracy: 4e-16 relative, measured against 50 digits, as far as sqrt(k) x is below 3.
+ * Accuracy: 2e-15 relative (tested against 50 digits) until near pi / sqrt(k), where S_k crosses zero.
  * Source: Hogg 1999, astro-ph/9905116, equation 16.
  *
  * @example

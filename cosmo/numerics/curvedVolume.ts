@@ -16,7 +16,7 @@ const TERMS = 12;
  * Arguments that are not finite, and sqrt(-k) x so large that sinh overflows, throw DomainError.
  *
  * Method: closed form for |k x^2| >= 1, else the series x^3 sum_j 2 (-4 k x^2)^j / (2 j + 3)!: the closed form cancels.
- * Accuracy: 1e-15 relative, measured against 50 digits.
+ * Accuracy: 4e-15 relative (tested against 50 digits).
  * Source: Hogg 1999, astro-ph/9905116, equation 29.
  *
  * @example

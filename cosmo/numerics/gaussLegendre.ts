@@ -20,7 +20,7 @@ const rules = new Map<number, QuadratureRule>();
  *
  * Method: Newton iteration on P_n(cos theta) in theta, with the recurrence in differences P_k - P_(k-1), which keeps full
  * relative accuracy of 1 - x and of the weights near the ends.
- * Accuracy: nodes 2e-16 absolute, weights 1e-14 relative (measured for n up to 200).
+ * Accuracy: nodes 5e-16 absolute, weights 1e-14 relative, tested for n up to 200.
  * Source: Abramowitz & Stegun 1964, 25.4.29 (weights), 22.16.6 (start value).
  *
  * @example

@@ -70,7 +70,7 @@ describe("one Radau step", () => {
     }
   });
 
-  it("gains order 9 at the mesh points and order 6 or more between them", () => {
+  it("gains order 9 at the mesh points and order 7 between them", () => {
     const end = Math.PI;
     const errors = [2, 4, 8].map((count) => {
       const record = equalSteps(oscillator, Float64Array.of(1, 0), end, count);
@@ -86,9 +86,9 @@ describe("one Radau step", () => {
     });
     for (let k = 0; k < 2; k++) {
       const order = Math.log2(errors[k].atMesh / errors[k + 1].atMesh);
-      expect(order).toBeGreaterThan(8.8); // measured 9.0
+      expect(order).toBeGreaterThan(8.8); // measured 8.93 and 8.98
       expect(order).toBeLessThan(9.3);
-      expect(Math.log2(errors[k].between / errors[k + 1].between)).toBeGreaterThan(5.8); // measured 6.2 to 7
+      expect(Math.log2(errors[k].between / errors[k + 1].between)).toBeGreaterThan(6.7); // measured 6.9 and 7.0
     }
   });
 });
@@ -120,9 +120,9 @@ describe("solveStiff", () => {
             solution.evaluate(t, y);
             between = Math.max(between, Math.abs(y[0] - Math.sin(t)));
           }
-          expect(atMesh).toBeLessThan(3 * tolerance + 1e-14); // measured at most 1.3
-          expect(atMesh).toBeLessThan(3 * solution.error[0] + 1e-14);
-          expect(between).toBeLessThan(10 * tolerance + 1e-14); // what the option allows; measured at most 4
+          expect(atMesh).toBeLessThan(12 * tolerance + 1e-14); // some hundred steps; at most 3.6 in 1500 runs
+          expect(atMesh).toBeLessThan(4 * solution.error[0] + 1e-14); // at most 1.8 in 1500 runs
+          expect(between).toBeLessThan(20 * tolerance + 1e-14); // at most 6.3 in 1500 runs; the option allows 10 a step
           expect(solution.converged).toBe(true);
         },
       ),
@@ -142,9 +142,9 @@ describe("solveStiff", () => {
     const solution = solveStiff(system, { start: 0, end: 2, initial, absolute: 1e-10, relative: 1e-10 });
     const at = 2 * solution.steps;
     // Hairer & Wanner 1996, IV.10; Test Set for IVP Solvers, problem VDPOL: y(2) (memory)
-    expect(Math.abs(solution.values[at] / 1.706167732170483 - 1)).toBeLessThan(1e-10);
-    expect(Math.abs(solution.values[at + 1] / -0.8928097010247975 - 1)).toBeLessThan(1e-10);
-    expect(solution.steps).toBeLessThan(900);
+    expect(Math.abs(solution.values[at] / 1.706167732170483 - 1)).toBeLessThan(1e-11); // measured 1.0e-12
+    expect(Math.abs(solution.values[at + 1] / -0.8928097010247975 - 1)).toBeLessThan(2e-11); // measured 2.0e-12
+    expect(solution.steps).toBeLessThan(900); // measured 654
   });
 
   it("solves Robertson's reaction over eleven decades of t, with components of very different size", () => {
@@ -158,11 +158,11 @@ describe("solveStiff", () => {
     });
     const y = solution.values.subarray(3 * solution.steps);
     // Test Set for IVP Solvers, problem ROBER: y(1e11) (memory)
-    expect(Math.abs(y[0] / 2.083340149701255e-8 - 1)).toBeLessThan(5e-10);
-    expect(Math.abs(y[1] / 8.333360770334713e-14 - 1)).toBeLessThan(5e-10);
-    expect(Math.abs(y[2] / 0.999999979166505 - 1)).toBeLessThan(1e-12);
-    expect(Math.abs(y[0] + y[1] + y[2] - 1)).toBeLessThan(1e-12);
-    expect(solution.steps).toBeLessThan(700);
+    expect(Math.abs(y[0] / 2.083340149701255e-8 - 1)).toBeLessThan(2e-10); // measured 1.9e-11
+    expect(Math.abs(y[1] / 8.333360770334713e-14 - 1)).toBeLessThan(2e-10); // measured 1.9e-11
+    expect(Math.abs(y[2] / 0.999999979166505 - 1)).toBeLessThan(1e-13); // measured 1.0e-14
+    expect(Math.abs(y[0] + y[1] + y[2] - 1)).toBeLessThan(1e-13); // an invariant that the method keeps; measured 1e-15
+    expect(solution.steps).toBeLessThan(700); // measured 524
   });
 
   it("solves the eight equations of HIRES", () => {
@@ -187,7 +187,7 @@ describe("solveStiff", () => {
       0.6238968252742796e-2, 0.2849998395185769e-2, 0.2850001604814231e-2,
     ];
     printed.forEach((value, c) => {
-      expect(Math.abs(solution.values[8 * solution.steps + c] / value - 1)).toBeLessThan(1e-9);
+      expect(Math.abs(solution.values[8 * solution.steps + c] / value - 1)).toBeLessThan(3e-12); // measured 3.2e-13
     });
   });
 
@@ -215,7 +215,7 @@ describe("solveStiff", () => {
         worst = Math.max(worst, Math.abs(solution.values[3 * i + c] - value));
       });
     }
-    expect(worst).toBeLessThan(5e-11);
+    expect(worst).toBeLessThan(5e-13); // measured 4.1e-14
     expect(worst).toBeLessThan(3 * Math.max(...solution.error));
   });
 
