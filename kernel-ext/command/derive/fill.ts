@@ -1,0 +1,40 @@
+import { DomainError, describeValue, UnknownNameError } from "../../../cosmo/errors";
+import { modelFieldByName, modelFields, validateGivens } from "../../../cosmo/model";
+import { CommandError } from "../commandError";
+import { type FlatValues, nestGivens, valueOfText } from "./givensOfRow";
+import { splitPairs } from "./pairs";
+
+/** What --set and --recombination give, by the field's name. */
+export type FillValues = FlatValues;
+
+/**
+ * Reads --set and --recombination and checks each value as the model will.
+ *
+ * @throws UnknownNameError for a name outside the vocabulary, DomainError for a value outside its rule
+ */
+export function parseFill(lists: readonly string[], recombination: string | undefined): FillValues {
+  const pairs = splitPairs(lists, "set", "neutrinos.effectiveNumber=3.046");
+  if (recombination !== undefined) pairs.push({ name: "recombination", value: recombination });
+  const values = new Map<string, number | string | readonly number[]>();
+  const where = "derive --set";
+  for (const { name, value } of pairs) {
+    const field = modelFieldByName.get(name);
+    if (field === undefined) {
+      throw new UnknownNameError({
+        where,
+        kind: "parameter",
+        given: name,
+        known: modelFields.map((each) => each.name),
+      });
+    }
+    if (values.has(name)) {
+      const twice = recombination !== undefined && name === "recombination" ? "--set and --recombination" : "--set";
+      throw new CommandError(`derive: ${twice} give ${describeValue(name)} twice`);
+    }
+    const parsed = valueOfText(field, value);
+    if ("reason" in parsed) throw new DomainError({ where, argument: name, rule: parsed.reason, value });
+    values.set(name, parsed.value);
+  }
+  validateGivens(nestGivens(values), where);
+  return values;
+}

@@ -1,0 +1,41 @@
+/** The help text of `derive`. */
+export const deriveUsage = `cosmology-cells derive FILE --add QUANTITIES [options]
+
+Reads one model a row and writes the rows with quantities added as columns. The columns of the file
+that have a name of the vocabulary (hubble, baryonDensity, neutrinos.massSum, ...) make the model; all
+others are carried through untouched. FILE ends in .csv, .tsv or .jsonl; - is standard input.
+
+  --add LIST            quantities to add: "age, lastScatteringRedshift, luminosityDistance(1.1)"
+  --out FILE            where the rows go; - (default) is standard output. The end of the name says the
+                        format; without one it is that of the input
+  --map LIST            what the file calls otherwise: "H0=hubble, Om=matterFraction". The columns keep
+                        their own names in the output
+  --set LIST            fills what the file lacks, a whole column or single empty cells:
+                        "neutrinos.effectiveNumber=3.046, conventions.closure=radiationOnTop"
+  --recombination TIER  calibrated (default), peebles or saha; the same as --set recombination=TIER
+  --digits N            significant digits of the added columns, 1 to 17; default 15
+  --errors              adds a column NAME.error behind each: the absolute numerical error estimate
+  --bad-rows refuse     (default) the first bad row ends the work; nothing is left under the name of --out
+  --bad-rows keep       a bad row is written with empty cells, and its reason in the column "problem"
+  --problem-column NAME another name for that column
+  --header no           leaves the header out of the output (csv, tsv)
+  --format FORMAT       format of standard input or output where no file name says it: csv (default),
+                        tsv, jsonl
+  --progress            tells rows done and rate on standard error (default where that is a terminal)
+  --help                this text
+
+LIST options may be given several times. In csv and tsv the first row names the columns, lines that
+begin with # are comments and are not written again, a list is 0.06;0, and a name such as
+comovingDistance(0.5,1) is quoted. A model's cell that is empty is refused unless --set fills it; a
+field that a JSON line leaves out counts as not given. In JSON lines a model may also be nested:
+{"neutrinos": {"massSum": 0.1}}. Numbers are decimal, with a point; NaN and 1e400 are refused.
+Rows keep their order, and each depends on itself alone. Standard output carries only data.
+
+  cosmology-cells derive models.csv --add "age, acousticAngle" --recombination peebles --out derived.csv
+  cosmology-cells derive chain.tsv --map "H0=hubble, Om=matterFraction" --set "baryonDensity=0.0224" \\
+      --add "dragSoundHorizon, volumeDistance(0.38)" --bad-rows keep --out chain.jsonl
+  cat models.csv | cosmology-cells derive - --add age --errors > derived.csv
+
+Ends with 0 when done, with 1 when the data were refused, with 2 when the command is wrong or does not
+fit the file.
+`;
