@@ -3,6 +3,7 @@ import { readFileSync } from "node:fs";
 import { join } from "node:path";
 import { nearestName } from "../../cosmo/errors";
 import { CommandError } from "./commandError";
+import { deriveUsage } from "./derive/usage";
 import { installCommand, installUsage } from "./install";
 import { NotebookFileError } from "./notebookFile";
 import { runCommand, runUsage } from "./run";
@@ -16,6 +17,12 @@ interface Command {
 
 const commands: Record<string, Command> = {
   install: { summary: "tell Jupyter about the kernel, or take it away", usage: installUsage, run: installCommand },
+  derive: {
+    summary: "add derived columns to a file of models",
+    usage: deriveUsage,
+    // Loaded when asked for: it brings the physics, which the other commands do not need.
+    run: (args) => (require("./derive") as typeof import("./derive")).deriveCommand(args),
+  },
   run: { summary: "run notebooks without Jupyter", usage: runUsage, run: runCommand },
   start: { summary: "run the demo notebooks, print their headline numbers", usage: startUsage, run: startCommand },
 };
