@@ -1,0 +1,92 @@
+import type { ConstantsSet } from "../constants";
+import { AtomMarch } from "./atomMarch";
+import { atomTables } from "./atomTables";
+import type { BoundColumns } from "./batchColumns";
+import { BatchRow } from "./batchRow";
+import { RowCloser } from "./closeRow";
+import { GridDamping } from "./gridDamping";
+import { GridDepths } from "./gridDepths";
+import { GridExpansion } from "./gridExpansion";
+import { Horizons } from "./horizons";
+import { RedshiftLadder } from "./redshiftLadder";
+import { squaredTermAt } from "./rowExpansion";
+import { rowStatus } from "./rowStatus";
+import { staysExpanding } from "./validatedRange";
+
+/** What the outputs of a plan need of every row. */
+export interface EngineNeeds {
+  readonly history: boolean;
+  readonly damping: boolean;
+  readonly age: boolean;
+  /** Redshifts of distances, times and rates; undefined where no output has one. */
+  readonly redshifts: readonly number[] | undefined;
+}
+
+/** All that is computed of one row; one object serves every row of a run. */
+export class RowEngine {
+  readonly row = new BatchRow();
+  readonly horizons = new Horizons();
+  readonly ladder: RedshiftLadder;
+  /** z_*, z_drag, k_D in 1/Mpc. */
+  lastScatteringRedshift = 0.5;
+  dragRedshift = 0.5;
+  dampingWavenumber = 0.5;
+  private readonly allMatter: boolean;
+  private readonly closer: RowCloser;
+  private readonly expansion = new GridExpansion();
+  private readonly march: AtomMarch;
+  private readonly depths = new GridDepths();
+  private readonly damping: GridDamping;
+
+  constructor(
+    bound: BoundColumns,
+    readonly constants: ConstantsSet,
+    tier: "peebles" | "calibrated",
+    private readonly needs: EngineNeeds,
+  ) {
+    this.allMatter = bound.words.get("conventions.equalityMatter") === "allMatter";
+    this.closer = new RowCloser(bound, constants);
+    this.march = new AtomMarch(atomTables(tier, constants), this.closer.comptonRate);
+    this.damping = new GridDamping(constants);
+    this.ladder = new RedshiftLadder(needs.redshifts ?? []);
+  }
+
+  /** a at equality. */
+  equalityScaleFactor(): number {
+    const { row } = this;
+    const matter = this.allMatter ? row.matterDensity : row.baryonDensity + row.coldMatterDensity;
+    return (row.photonDensity + 3 * row.speciesDensity) / matter;
+  }
+
+  /** a^4 (H/100 km/s/Mpc)^2. */
+  squaredTerm(a: number): number {
+    return squaredTermAt(this.row, a, Math.log(a));
+  }
+
+  /** Computes a row; a status other than `engine` says why it has to take the single path. */
+  compute(index: number): number {
+    const { row, needs } = this;
+    if (!this.closer.close(index, row)) return rowStatus.outsideRange;
+    if (!staysExpanding(row)) return rowStatus.nearTurningPoint;
+    if (needs.redshifts !== undefined) this.ladder.run(row);
+    if (needs.history) {
+      const { inverseRate } = this.expansion;
+      this.expansion.fill(row);
+      this.march.run(row, inverseRate);
+      this.depths.run(row, inverseRate, this.march.ionized);
+      const { lastScattering, drag } = this.depths;
+      if (lastScattering.lower < 0 || drag.lower < 0) return rowStatus.offGrid;
+      const star = row.photonTemperature * Math.exp(-lastScattering.u);
+      const dragScale = row.photonTemperature * Math.exp(-drag.u);
+      this.lastScatteringRedshift = 1 / star - 1;
+      this.dragRedshift = 1 / dragScale - 1;
+      this.horizons.run(row, star, dragScale);
+      if (needs.damping) {
+        this.dampingWavenumber = this.damping.run(row, inverseRate, this.march.ionized, lastScattering);
+      }
+    } else if (needs.age) {
+      this.horizons.runAge(row);
+    }
+    return rowStatus.engine;
+  }
+}
