@@ -11,8 +11,7 @@ export {
 export {
   type ChartPanel,
   type LineChartOptions,
-  type LineSeries,
   lineChart,
-  type PointSeries,
 } from "./chart/lineChart";
+export type { LineSeries, PointSeries } from "./chart/lineLayers";
 export { type RenderOptions, renderSvg } from "./chart/renderSvg";

@@ -32,6 +32,8 @@ export interface TableColumn {
   readonly align?: "left" | "right" | "center" | "point" | undefined;
   /** Significant digits of numbers, see `formatNumber`. */
   readonly digits?: NumberFormat["digits"] | undefined;
+  /** The texts of this column are symbols or units: Greek letters and, in HTML, true sub- and superscripts. */
+  readonly symbols?: boolean | undefined;
   /** Writes the value instead; what it returns is escaped like everything else. */
   readonly format?: ((value: TableValue, row: TableRow) => string) | undefined;
 }
@@ -110,7 +112,8 @@ function fill(count: number, withPoint: boolean): string {
 }
 
 /** Cells of a column as HTML text, the decimal points lined up by invisible fill. */
-function htmlCells({ cells, align }: FormattedColumn): string[] {
+function htmlCells({ column, cells, align }: FormattedColumn): string[] {
+  if (column.symbols === true) return cells.map(symbolHtml);
   if (align !== "point") return cells.map(escapeHtml);
   return alignOnPoint(cells).map(({ text, after }) => {
     if (text === missingMark) return text;
@@ -120,7 +123,8 @@ function htmlCells({ cells, align }: FormattedColumn): string[] {
 }
 
 /** Cells of a column as text of one width. */
-function textCells({ cells, align }: FormattedColumn, head: string): string[] {
+function textCells({ column, cells: written, align }: FormattedColumn, head: string): string[] {
+  const cells = column.symbols === true ? written.map(symbolText) : written;
   const lined =
     align === "point"
       ? alignOnPoint(cells).map(({ text, before, after }) => {
@@ -189,9 +193,12 @@ export function table(options: TableOptions): Table {
     const cells = formatted.map(htmlCells);
     const head = formatted
       .map(({ column, align }) => {
-        const symbol = column.symbol ? ` <span class="cell-symbol">${symbolHtml(column.symbol)}</span>` : "";
-        const unit = column.unit ? ` <span class="cell-unit">[${symbolHtml(column.unit)}]</span>` : "";
-        return `<th scope="col" class="cell-${align}">${escapeHtml(column.label)}${symbol}${unit}</th>`;
+        const words = [
+          column.label === "" ? "" : escapeHtml(column.label),
+          column.symbol ? `<span class="cell-symbol">${symbolHtml(column.symbol)}</span>` : "",
+          column.unit ? `<span class="cell-unit">[${symbolHtml(column.unit)}]</span>` : "",
+        ];
+        return `<th scope="col" class="cell-${align}">${words.filter((word) => word !== "").join(" ")}</th>`;
       })
       .join("");
     const body = shown.map((_, position) => {
@@ -246,9 +253,11 @@ ${below}`;
   };
 
   const toMarkdown = (): string => {
+    const shownCell = ({ column, cells }: FormattedColumn, position: number): string =>
+      column.symbols === true ? symbolText(cells[position] as string) : (cells[position] as string);
     const row = (cells: readonly string[]): string => `| ${cells.map(escapeMarkdown).join(" | ")} |`;
     const marks = formatted.map(({ align }) => (align === "left" ? ":---" : align === "center" ? ":---:" : "---:"));
-    const body = shown.map((_, position) => row(formatted.map(({ cells }) => cells[position] as string)));
+    const body = shown.map((_, position) => row(formatted.map((column) => shownCell(column, position))));
     if (cut > 0) body.splice(headCount, 0, row([`\u22ee ${cutLine}`, ...columns.slice(1).map(() => "")]));
     const below = notes.length === 0 ? [] : ["", ...notes.map((note) => `- ${escapeMarkdown(note)}`)];
     return [`**${escapeMarkdown(title)}**`, "", row(heads), `| ${marks.join(" | ")} |`, ...body, ...below].join("\n");
@@ -270,9 +279,4 @@ ${below}`;
   };
   Object.defineProperty(result, Symbol.for("nodejs.util.inspect.custom"), { value: toText, enumerable: false });
   return result;
-}
-
-/** Symbol of a column as it stands in text, for notes that refer to it. */
-export function columnSymbol(column: TableColumn): string {
-  return symbolText(column.symbol ?? column.label);
 }

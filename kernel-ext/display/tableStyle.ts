@@ -24,6 +24,8 @@ const rules = [
   ".cell-output sub,.cell-output sup{font-size:.75em;line-height:0}",
   ".cell-output p.cell-label{font-weight:600;font-size:.93em;margin:.8em 0 .1em}",
   ".cell-output ul.cell-notes,.cell-output ul.cell-sources{list-style:none;margin:0 0 .6em;padding:0;font-size:.93em;max-width:60em}",
+  ".cell-output ul.cell-sources{columns:26em;column-gap:2em;font-size:.88em;max-width:none}",
+  ".cell-output ul.cell-sources li{break-inside:avoid}",
   ".cell-output ul.cell-notes li,.cell-output ul.cell-sources li{margin:.15em 0;padding:0}",
   ".cell-output code{font-size:.95em;background:none;padding:0;color:inherit}",
   ".cell-output img.cell-chart{max-width:100%;height:auto;display:block;margin:.4em 0}",

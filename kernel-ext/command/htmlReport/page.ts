@@ -57,7 +57,8 @@ tr>.cell-right,tr>.cell-point{text-align:right}tr>.cell-center{text-align:center
 .cell-summary{margin:.2em 0 .7em;max-width:44em}
 .cell-label{font-weight:600;font-size:.92rem;margin:.9em 0 .1em}
 .cell-notes,.cell-sources{list-style:none;margin:0 0 .6em;padding:0;font-size:.92rem;color:var(--quiet)}
-.cell-notes li,.cell-sources li{margin:.15em 0}
+.cell-sources{columns:24em;column-gap:2em;font-size:.86rem}
+.cell-notes li,.cell-sources li{margin:.15em 0;break-inside:avoid}
 .cell-symbol{font-style:italic;font-weight:400;white-space:nowrap}
 .cell-unit{font-weight:400;white-space:nowrap}
 sub,sup{font-size:.75em;line-height:0}

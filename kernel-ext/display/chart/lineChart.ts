@@ -5,22 +5,10 @@ import { formatNumber } from "../digits";
 import { visibleText } from "../escape";
 import { type ChartAxis, type SettledAxis, settleAxis } from "./axis";
 import { type Chart, checkWords, makeChart } from "./chart";
-import { type ChartBand, type ChartRule, frameEncoding, guideLayers, type PlotFrame } from "./guides";
-import { type KeyEntry, keyView, pointMark } from "./key";
+import { type ChartBand, type ChartRule, guideLayers, type PlotFrame } from "./guides";
+import { type KeyEntry, keyView } from "./key";
+import { curveLayer, type LineSeries, markerLayer, type PointSeries, pointLayers } from "./lineLayers";
 import { type SeriesLook, seriesLook, seriesLooks } from "./palette";
-import { chartDigits, thinned } from "./thin";
-
-/** A curve. */
-export interface LineSeries {
-  readonly label: string;
-  readonly x: ArrayLike<number>;
-  readonly y: ArrayLike<number>;
-}
-
-/** Points, with symmetric error bars where errors are given. */
-export interface PointSeries extends LineSeries {
-  readonly error?: ArrayLike<number> | undefined;
-}
 
 /** What one panel shows. */
 export interface ChartPanel {
@@ -46,9 +34,6 @@ export interface LineChartOptions extends ChartPanel {
 }
 
 const caller = "lineChart";
-/** Points that a curve keeps at most; the picture is the same (see thin.ts). */
-const mostPoints = 400;
-
 /**
  * A line chart.
  *
@@ -159,6 +144,11 @@ function frameOf(panel: ChartPanel, x: SettledAxis, width: number, index: number
   return { caller, x, y, width, height, xLabelled: index === count - 1 };
 }
 
+/** The points of a panel that have the name of a curve, and so its look. */
+function sameName(panel: ChartPanel, curve: LineSeries): PointSeries[] {
+  return (panel.points ?? []).filter(({ label }) => label === curve.label);
+}
+
 function panelView(
   panel: ChartPanel,
   frame: PlotFrame,
@@ -171,114 +161,14 @@ function panelView(
   const layer = [
     ...own.below,
     ...curves.map(({ series, look }) => curveLayer(frame, series, look)),
-    ...curves.map(({ series, look }, index) => markerLayer(frame, series, look, (index + 0.5) / curves.length)),
+    ...curves.map(({ series, look }, index) =>
+      markerLayer(frame, series, look, (index + 0.5) / curves.length, sameName(panel, series)),
+    ),
     ...(panel.points ?? []).flatMap((series) => pointLayers(frame, series, looks.get(series.label) as SeriesLook)),
     ...shared.above,
     ...own.above,
   ];
   return { width: frame.width, height: frame.height, layer };
-}
-
-/** Pixels of a series, not cut at the ends of the axes. */
-function pixelsOf(
-  { x, y, width, height }: PlotFrame,
-  series: LineSeries,
-): { across: Float64Array; down: Float64Array } {
-  const across = new Float64Array(series.x.length);
-  const down = new Float64Array(series.x.length);
-  for (let index = 0; index < across.length; index++) {
-    across[index] = x.pixel(x.place(series.x[index] as number), width, false);
-    down[index] = y.pixel(y.place(series.y[index] as number), height, true);
-  }
-  return { across, down };
-}
-
-function rowsOf(frame: PlotFrame, series: LineSeries, indices: readonly number[]): Record<string, unknown>[] {
-  return indices.map((index) => ({
-    [frame.x.field]: chartDigits(frame.x.place(series.x[index] as number)),
-    y: chartDigits(frame.y.place(series.y[index] as number)),
-  }));
-}
-
-function tooltip(frame: PlotFrame): Record<string, unknown>[] {
-  return [
-    { field: frame.x.field, type: "quantitative", title: frame.x.title, format: ".6~g" },
-    { field: "y", type: "quantitative", title: frame.y.title, format: ".6~g" },
-  ];
-}
-
-function curveLayer(frame: PlotFrame, series: LineSeries, look: SeriesLook): Record<string, unknown> {
-  const { across, down } = pixelsOf(frame, series);
-  return {
-    data: { values: rowsOf(frame, series, thinned(across, down, mostPoints)) },
-    mark: { type: "line", color: look.color, strokeDash: look.dash, strokeWidth: 2, clip: true, interpolate: "linear" },
-    encoding: frameEncoding(frame),
-  };
-}
-
-/** A few points of the series' shape along its curve, at other places than those of the other series. */
-function markerLayer(frame: PlotFrame, series: LineSeries, look: SeriesLook, offset: number): Record<string, unknown> {
-  const { across, down } = pixelsOf(frame, series);
-  const inside = (index: number): boolean =>
-    (across[index] as number) >= -0.5 &&
-    (across[index] as number) <= frame.width + 0.5 &&
-    (down[index] as number) >= -0.5 &&
-    (down[index] as number) <= frame.height + 0.5;
-  const visible = Array.from(across.keys()).filter(inside);
-  const count = 6;
-  const chosen = new Set<number>();
-  if (visible.length <= 2 * count) for (const index of visible) chosen.add(index);
-  else {
-    for (let step = 0; step < count; step++) {
-      const wanted = ((step + offset) / count) * frame.width;
-      let nearest = visible[0] as number;
-      for (const index of visible) {
-        if (Math.abs((across[index] as number) - wanted) < Math.abs((across[nearest] as number) - wanted))
-          nearest = index;
-      }
-      if (Math.abs((across[nearest] as number) - wanted) < frame.width / count) chosen.add(nearest);
-    }
-  }
-  return {
-    data: {
-      values: rowsOf(
-        frame,
-        series,
-        [...chosen].sort((one, other) => one - other),
-      ),
-    },
-    mark: pointMark(look, true),
-    encoding: { ...frameEncoding(frame), tooltip: tooltip(frame) },
-  };
-}
-
-function pointLayers(frame: PlotFrame, series: PointSeries, look: SeriesLook): Record<string, unknown>[] {
-  const indices = Array.from({ length: series.x.length }, (_, index) => index);
-  const rows = rowsOf(frame, series, indices);
-  const layers: Record<string, unknown>[] = [];
-  if (series.error !== undefined) {
-    const bars = rows.map((row, index) => {
-      const value = series.y[index] as number;
-      const bar = series.error?.[index] ?? 0;
-      const low = frame.y.place(value - bar);
-      return {
-        [frame.x.field]: row[frame.x.field],
-        low: chartDigits(Math.max(frame.y.low, low)),
-        high: chartDigits(Math.min(frame.y.high, frame.y.place(value + bar))),
-      };
-    });
-    layers.push({
-      data: { values: bars },
-      mark: { type: "rule", color: look.color, strokeWidth: 1.5 },
-      encoding: { ...frameEncoding(frame, frame.x.field, "low"), y2: { field: "high" } },
-    });
-  }
-  layers.push({
-    data: { values: rows },
-    mark: { ...pointMark(look, false), clip: true },
-    encoding: { ...frameEncoding(frame), tooltip: tooltip(frame) },
-  });
-  return layers;
 }
 
 /** The ends of each series and the rules, in words. */

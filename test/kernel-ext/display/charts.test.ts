@@ -117,6 +117,42 @@ describe("lineChart", () => {
     expect(rows).toContainEqual({ x: 7_003, y: 5 });
   });
 
+  it("draws a cloud of many points with fewer that cover the same area", () => {
+    const x = Array.from({ length: 20_000 }, (_, index) => ((index * 7919) % 20_011) / 20_011);
+    const y = Array.from({ length: 20_000 }, (_, index) => ((index * 104_729) % 19_997) / 19_997);
+    const chart = lineChart({ ...words, ...axes, points: [{ label: "cloud", x, y }] });
+    const rows = marksOf(chart).find(({ mark }) => mark["type"] === "point")?.data.values ?? [];
+    expect(rows.length).toBeGreaterThan(1000);
+    expect(rows.length).toBeLessThanOrEqual(2500);
+    // Every point of the cloud has a drawn one within the diagonal of a square of 11 pixels of the 520 x 300 plot.
+    for (let index = 0; index < x.length; index += 97) {
+      const near = rows.some(
+        (row) =>
+          Math.hypot(
+            ((row["x"] as number) - (x[index] as number)) * 520,
+            ((row["y"] as number) - (y[index] as number)) * 300,
+          ) < 16,
+      );
+      expect(near).toBe(true);
+    }
+  });
+
+  it("draws a point on the edge whole and leaves out one beyond it", async () => {
+    const at = (value: number): number => {
+      const chart = lineChart({
+        ...words,
+        x: { label: "x", domain: [0, 1] },
+        y: axes.y,
+        points: [{ label: "p", x: [0.5, value], y: [1, 2] }],
+      });
+      const point = marksOf(chart).find(({ mark }) => mark["type"] === "point");
+      expect(point?.mark["clip"]).toBeUndefined();
+      return point?.data.values.length as number;
+    };
+    expect(at(1)).toBe(2);
+    expect(at(1.01)).toBe(1);
+  });
+
   it("says the ends of each series in its plain text", () => {
     const chart = lineChart({
       ...words,

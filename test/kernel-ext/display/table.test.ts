@@ -56,6 +56,18 @@ redshift z  luminosity distance D_L [Mpc]          angle \u03b8_*  name    used
     expect(inspect(sample)).toBe(sample.toText());
   });
 
+  it("sets a column of symbols or units as such", () => {
+    const made = table({
+      title: "T",
+      columns: [{ key: "s", label: "symbol", symbols: true }],
+      rows: [{ s: "theta_*" }, { s: "Mpc^-1" }, { s: "<b>_x" }],
+    });
+    expect(made.toHtml()).toContain(">\u03b8<sub>*</sub><");
+    expect(made.toHtml()).toContain(">&lt;b&gt;<sub>x</sub><");
+    expect(made.toText().split("\n").slice(4)).toEqual(["\u03b8_*", "Mpc\u207b\u00b9", "<b>_x"]);
+    expect(made.toMarkdown()).toContain("| \u03b8\\_\\* |");
+  });
+
   it("escapes every text that comes from data", () => {
     const evil = '</td><script>alert("1")</script>\u001b[31m\u202e';
     const made = table({
