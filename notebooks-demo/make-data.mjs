@@ -44,10 +44,15 @@ function drawRedshift() {
   }
 }
 
-// The number of galaxies is Poisson: as many as arrive at unit rate before the expected number is reached.
+/** How long until the next galaxy, where on average one arrives in a unit of time. */
+const waitingTime = () => -Math.log(1 - uniform());
+
+// The number of galaxies is Poisson: as many as arrive before the expected number has passed.
 const redshifts = [];
-for (let time = -Math.log(1 - uniform()); time < pilotArea * surfaceDensity; time -= Math.log(1 - uniform())) {
+let time = waitingTime();
+while (time < pilotArea * surfaceDensity) {
   redshifts.push(drawRedshift());
+  time += waitingTime();
 }
 
 const lines = [
