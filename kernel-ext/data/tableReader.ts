@@ -36,7 +36,7 @@ export interface TableReader {
 }
 
 /** The characters that one row may take; more mean a quote that is never closed, or a file that is no table. */
-export const longestRow = 16 * 1024 * 1024;
+export const longestRow = 4 * 1024 * 1024;
 
 /**
  * Starts reading a table: reads up to the end of the header and stops there. Memory stays constant however long the table.

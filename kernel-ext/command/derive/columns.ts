@@ -46,6 +46,7 @@ export function planColumns(columns: readonly string[], options: DeriveOptions):
   const groups: GroupColumn[] = [];
   const warnings: string[] = [];
   const derived: string[] = [];
+  const strangers: string[] = [];
   const takenBy = new Map<string, string>();
   columns.forEach((column, index) => {
     const name = options.renamed.get(column) ?? column;
@@ -60,15 +61,16 @@ export function planColumns(columns: readonly string[], options: DeriveOptions):
       fields.push({ index, column, field });
     } else if (groupNames.has(name) && options.inputFormat === "jsonl") groups.push({ index, column });
     else if (quantityRegister.has(name)) derived.push(column);
-    else {
-      const near = nearestName(name, [...modelFieldByName.keys()]);
-      if (near !== undefined) {
-        warnings.push(
-          `column ${describeValue(column)} is not in the vocabulary and is carried through; if it is ${near}, say --map ${describeValue(`${column}=${near}`)}`,
-        );
-      }
-    }
+    else strangers.push(column);
   });
+  for (const column of strangers) {
+    const near = nearestName(column, [...modelFieldByName.keys()]);
+    // Where the field is given already, a column with a similar name is the user's own.
+    if (near === undefined || takenBy.has(near) || options.fill.has(near)) continue;
+    warnings.push(
+      `column ${describeValue(column)} is not in the vocabulary and is carried through; if it is ${near}, say --map ${describeValue(`${column}=${near}`)}`,
+    );
+  }
   if (derived.length > 0) {
     const names = derived.map((name) => describeValue(name)).join(", ");
     warnings.push(
