@@ -1,4 +1,5 @@
 import { DomainError, NotConvergedError } from "../errors";
+import type { RadauStages } from "./radauStages";
 import { RadauStep } from "./radauStep";
 import { StepRecord, type StiffSolution } from "./stiffSolution";
 
@@ -70,7 +71,8 @@ export function solveStiff(system: StiffSystem, options: StiffOptions): StiffSol
   const direction = end < start ? -1 : 1;
   const range = Math.abs(end - start);
   const record = new StepRecord(start, initial);
-  const stepper = new RadauStep(system, start, initial, absolute, relative, interior);
+  const step = new RadauStep(system, start, initial, absolute, relative, interior);
+  const { stages } = step;
   if (range === 0) throw rangeIsEmpty(end);
 
   let h = direction * Math.min(Math.abs(options.firstStep ?? 1e-4 * range), range);
@@ -78,28 +80,28 @@ export function solveStiff(system: StiffSystem, options: StiffOptions): StiffSol
   let stepBefore = 0;
   let refused = false;
   for (;;) {
-    const remaining = end - stepper.t;
+    const remaining = end - stages.t;
     let last = false;
     if (Math.abs(h) >= Math.abs(remaining) * (1 - 1e-10)) {
       h = remaining;
       last = true;
     } else if (Math.abs(h) > 0.5 * Math.abs(remaining)) h = 0.5 * remaining;
     if (record.steps + record.rejected >= maximumSteps) {
-      throw stuck(`step limit ${maximumSteps} reached`, stepper, record);
+      throw stuck(`step limit ${maximumSteps} reached`, stages, record);
     }
-    if (!(Math.abs(h) > 8 * Number.EPSILON * Math.max(Math.abs(stepper.t), 1e-3 * range))) {
-      throw stuck(`step size ${h} underflowed`, stepper, record);
+    if (!(Math.abs(h) > 8 * Number.EPSILON * Math.max(Math.abs(stages.t), 1e-3 * range))) {
+      throw stuck(`step size ${h} underflowed`, stages, record);
     }
 
-    if (!stepper.attempt(h)) {
+    if (!stages.attempt(h)) {
       record.rejected++;
       refused = true;
-      h *= stepper.reduction;
+      h *= stages.reduction;
       continue;
     }
-    let error = stepper.estimate(h, record.steps === 0 || refused);
-    if (record.steps < settle) error = stepper.disregardError();
-    const safety = (SAFETY * 25) / (24 + stepper.iterations);
+    let error = step.estimate(h, record.steps === 0 || refused);
+    if (record.steps < settle) error = step.disregardError();
+    const safety = (SAFETY * 25) / (24 + stages.iterations);
     let factor = safety * error ** -EXPONENT;
     if (!(error <= 1)) {
       record.rejected++;
@@ -115,26 +117,26 @@ export function solveStiff(system: StiffSystem, options: StiffOptions): StiffSol
     }
     errorBefore = Math.max(error, 1e-12);
     stepBefore = Math.abs(h);
-    stepper.accept(h, last ? end : stepper.t + h, record);
-    if (last || stopWhen?.(stepper.t, stepper.y)) break;
+    step.accept(h, last ? end : stages.t + h, record);
+    if (last || stopWhen?.(stages.t, stages.y)) break;
     factor = Math.max(0.1, Math.min(6, factor));
     if (refused) factor = Math.min(1, factor);
     // A step that stays the same keeps the factored matrices.
     if (!(factor >= 1 && factor <= 1.1)) h *= factor;
     refused = false;
   }
-  record.evaluations = stepper.evaluations;
+  record.evaluations = stages.evaluations;
   record.finish();
   return record;
 }
 
-function stuck(what: string, stepper: RadauStep, record: StepRecord): NotConvergedError {
-  const values = Array.from(stepper.y, (value) => value.toPrecision(6)).join(", ");
+function stuck(what: string, stages: RadauStages, record: StepRecord): NotConvergedError {
+  const values = Array.from(stages.y, (value) => value.toPrecision(6)).join(", ");
   return new NotConvergedError({
     where: "solveStiff",
-    reason: `${what} at t = ${stepper.t} after ${record.steps} steps and ${record.rejected} refused; y = [${values}]`,
-    value: stepper.t,
-    evaluations: stepper.evaluations,
+    reason: `${what} at t = ${stages.t} after ${record.steps} steps and ${record.rejected} refused; y = [${values}]`,
+    value: stages.t,
+    evaluations: stages.evaluations,
   });
 }
 
