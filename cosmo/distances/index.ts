@@ -8,6 +8,7 @@ export { distanceModulus, distanceModulusQuantity } from "./distanceModulus";
 export { hubbleDistance, hubbleDistanceQuantity } from "./hubbleDistance";
 export { luminosityDistance, luminosityDistanceQuantity } from "./luminosityDistance";
 export { properScale, properScaleQuantity } from "./properScale";
+export { type InvertibleDistance, redshiftAt, redshiftAtQuantities } from "./redshiftAtDistance";
 export { redshiftPair } from "./redshiftPair";
 export { antipodeNote, curvaturePerArea, transverseDistance, transverseDistanceQuantity } from "./transverseDistance";
 export { volumeDistance, volumeDistanceQuantity } from "./volumeDistance";

@@ -41,5 +41,9 @@ export {
   massToTemperature,
   neutrinoTemperature,
 } from "./neutrinoDensity";
+export { redshiftAtHubbleRate, redshiftAtHubbleRateQuantities } from "./redshiftAtHubbleRate";
+export { redshiftAtTemperature, redshiftAtTemperatureQuantity } from "./redshiftAtTemperature";
+export { redshiftNodesPart } from "./redshiftNodes";
 export { requireBigBang, requireFiniteStart, requireRedshift } from "./requirePast";
+export { askedValue, type Branch, type RedshiftCurve, requireAsked, solveRedshift } from "./solveRedshift";
 export { turnaroundRedshiftPart } from "./turnaround";

@@ -22,6 +22,7 @@ import {
   hubbleDistanceQuantity,
   luminosityDistanceQuantity,
   properScaleQuantity,
+  redshiftAtQuantities,
   transverseDistanceQuantity,
   volumeDistanceQuantity,
 } from "../distances";
@@ -43,6 +44,8 @@ import {
   neutrinoFractionAtQuantity,
   photonFractionAtQuantity,
   radiationFractionAtQuantity,
+  redshiftAtHubbleRateQuantities,
+  redshiftAtTemperatureQuantity,
 } from "../expansion";
 import {
   baryonLoadingQuantity,
@@ -72,6 +75,9 @@ import {
   lightTravelDistanceQuantity,
   lookbackTimeQuantity,
   particleHorizonQuantity,
+  redshiftAtAgeQuantity,
+  redshiftAtLightTravelDistanceQuantity,
+  redshiftAtLookbackTimeQuantity,
 } from "../times";
 import { modelQuantities } from "./modelQuantities";
 
@@ -108,6 +114,12 @@ const quantities: readonly ModelQuantity[] = [
   comovingVolumeElementQuantity,
   properScaleQuantity,
   alcockPaczynskiRatioQuantity,
+  redshiftAtAgeQuantity,
+  redshiftAtLookbackTimeQuantity,
+  redshiftAtLightTravelDistanceQuantity,
+  ...redshiftAtQuantities,
+  redshiftAtTemperatureQuantity,
+  ...redshiftAtHubbleRateQuantities,
   equalityRedshiftQuantity,
   equalityWavenumberQuantity,
   accelerationRedshiftQuantity,

@@ -1,7 +1,8 @@
 import type { ModelEvaluation } from "../expansion";
 import type { ClosedModel, ModelGivens } from "../model";
 import { findQuantity } from "../quantities";
-import { Evaluation, evaluateQuantity, type QuantityValue } from "../quantity";
+import { checkArguments, Evaluation, evaluateQuantity, type QuantityValue } from "../quantity";
+import { computeQuantity } from "../quantity/quantity";
 import { closeModel, type Origin } from "./closeModel";
 
 /** One closed model and every number that can be asked of it; each history, depth and horizon is computed once. */
@@ -29,12 +30,14 @@ export class ModelNumbers {
   }
 
   /**
-   * A quantity's bare value.
+   * A quantity's bare value: the same number, without the effort of measuring its error.
    *
    * @example evaluateModel(base).value("age") // 13.8
    */
   value(name: string, ...values: number[]): number {
-    return this.quantity(name, ...values).value;
+    const definition = findQuantity(name, this.origin.where ?? "quantity");
+    checkArguments(definition, values, this.origin.place);
+    return computeQuantity(definition, this.evaluation, values, this.origin.place);
   }
 }
 
