@@ -144,7 +144,8 @@ function store(work: Workspace, index: number, lower: number, upper: number): vo
  *
  * Method: Gauss-Kronrod pair with 10 and 21 nodes; the subinterval with the largest error is bisected until the sum of
  * the errors is below the tolerance.
- * Accuracy: relative 1e-12 by default; the error estimate holds in at least 99% of the families in the tests.
+ * Accuracy: relative 1e-12 by default; the error estimate holds in at least 99% of the families in the tests. It takes f
+ * for smooth: noise in f below about 1e-7 of its variation may exceed it.
  * Source: Piessens, de Doncker-Kapenga, Ueberhuber & Kahaner 1983, QUADPACK (the error estimate and its round-off floor);
  * Kronrod 1965 (the rule).
  *
