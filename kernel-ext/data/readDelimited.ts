@@ -4,6 +4,9 @@ import { parseNumber } from "./parseNumber";
 import { shownPiece, TableError } from "./tableError";
 import { longestRow, type TableReader, type TableRow } from "./tableReader";
 
+/** The characters of an open row from which on it is parsed less often. */
+const patience = 256 * 1024;
+
 /** What papaparse's parser returns for one piece of text. */
 interface ParsedPiece {
   data: string[][];
@@ -75,8 +78,14 @@ async function* rowsOf(
     return rows;
   };
 
+  // Each parse begins at the beginning of the open row. Where that row is very long, and only there, pieces are gathered until
+  // they have doubled it, so that the work stays in proportion to the length.
+  let enough = 0;
   for await (const text of decodeText(bytes, file)) {
-    const rows = parse(open + text, false);
+    open += text;
+    if (open.length < enough) continue;
+    const rows = parse(open, false);
+    enough = open.length > patience ? 2 * open.length : 0;
     if (rows.length > 0) yield rows;
   }
   const rows = parse(open, true);
