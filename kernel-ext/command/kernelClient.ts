@@ -67,6 +67,8 @@ type Listener = (message: WireMessage) => void;
 
 /** How long an interrupted cell may take to end before the kernel is given up. */
 const interruptPatience = 5000;
+/** How long a kernel may take to answer a shutdown, and then to end. */
+const shutdownPatience = 10_000;
 
 export class KernelClient {
   private readonly replies = new Map<string, (message: WireMessage) => void>();
@@ -231,7 +233,11 @@ export class KernelClient {
     const reply = new Promise<WireMessage>((resolve) => this.replies.set(header.msg_id, resolve));
     const idle = new Promise<void>((resolve) => this.idle.set(header.msg_id, resolve));
     await (channel === "shell" ? this.shell : this.controlSocket).send(this.codec.frames(message));
-    return { id: header.msg_id, reply: this.unlessFailed(reply), idle: this.unlessFailed(idle) };
+    const result = { id: header.msg_id, reply: this.unlessFailed(reply), idle: this.unlessFailed(idle) };
+    // Who asks only for one of them need not handle the other's failure, which is the same.
+    result.reply.catch(() => undefined);
+    result.idle.catch(() => undefined);
+    return result;
   }
 
   /** Sends a request and waits for its reply. */
@@ -307,8 +313,8 @@ export class KernelClient {
   async shutdown(): Promise<void> {
     this.closing = true;
     try {
-      await this.request("shutdown_request", { restart: false }, 5000, "control");
-      await this.within(this.exit, 5000, "the kernel did not end");
+      await this.request("shutdown_request", { restart: false }, shutdownPatience, "control");
+      await this.within(this.exit, shutdownPatience, "the kernel did not end");
     } catch {
       this.process.kill("SIGKILL");
       await this.exit;

@@ -133,7 +133,7 @@ export function describeDiagnostics(diagnostics: Diagnostic[], cell: string, sou
   for (const one of diagnostics) {
     const last = groups.at(-1)?.[0];
     const same = last && last.start.offset === one.start.offset && last.end.offset === one.end.offset;
-    if (same && last.code !== one.code) groups.at(-1)?.push(one);
+    if (same) groups.at(-1)?.push(one);
     else groups.push([one]);
   }
   const traceback: string[] = [];

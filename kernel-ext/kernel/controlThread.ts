@@ -32,12 +32,48 @@ const patience = 150;
 /** How often the main thread is woken and the parent looked for. */
 const tickEvery = 1000;
 /** A shutdown that is not answered by then is carried out from here. */
-const shutdownPatience = 3000;
+const shutdownPatience = 8000;
 
-function terminateRunningCode(): void {
+/**
+ * Whose code a stack of the main thread holds. Ending code while none of the user's is there would hit the next callback
+ * of the kernel instead. A stack without any frame is that of an idle thread, or of one between two microtasks.
+ */
+export function stackOwner(stack: string): "user" | "kernel" | "nobody" {
+  const frames = stack.split("\n").filter((line) => /:\d+:\d+\)?$/.test(line) && !/[( ]evaluate:\d/.test(line));
+  if (frames.length === 0) return "nobody";
+  return frames.every((line) => ownFrame.test(line)) ? "kernel" : "user";
+}
+
+const ownFrame = /node:|[\\/](kernel-ext[\\/]kernel|tslab[\\/]dist|zeromq)[\\/]/;
+
+/** Reads the stack of the main thread, wherever it is; an interrupt of the virtual machine runs this in between. */
+const stackExpression = `(() => {
+  const { stackTraceLimit, prepareStackTrace } = Error;
+  Error.stackTraceLimit = Infinity;
+  Error.prepareStackTrace = undefined;
+  try { return String(new Error().stack); }
+  finally { Object.assign(Error, { stackTraceLimit, prepareStackTrace }); }
+})()
+//# sourceURL=evaluate`;
+
+/**
+ * Ends the code that the main thread runs, if it is the user's.
+ *
+ * @param idleBefore whether the thread was seen without code before and has not answered since: then it goes from one
+ *   microtask to the next without end, for an idle thread answers at once
+ * @param seen takes whether the thread was seen without code this time
+ */
+function endUserCode(idleBefore: boolean, seen: (nobody: boolean) => void): void {
   const session = new Session();
   session.connectToMainThread();
-  session.post("Runtime.terminateExecution", () => session.disconnect());
+  session.post("Runtime.evaluate", { expression: stackExpression, returnByValue: true }, (error, answer) => {
+    const stack = error ? "" : String((answer as { result?: { value?: unknown } }).result?.value ?? "");
+    const owner = stackOwner(stack);
+    seen(owner === "nobody");
+    if (owner === "user" || (owner === "nobody" && idleBefore)) {
+      session.post("Runtime.terminateExecution", () => session.disconnect());
+    } else session.disconnect();
+  });
 }
 
 async function serve(port: MessagePort, data: ControlThreadData): Promise<void> {
@@ -59,11 +95,20 @@ async function serve(port: MessagePort, data: ControlThreadData): Promise<void> 
     unanswered.delete(id);
   };
 
-  /** Ends running code again and again until the main thread has answered: it may start more before it sees the request. */
-  const endCode = (id: number): NodeJS.Timeout =>
-    setInterval(() => {
-      if (unanswered.has(id) && Atomics.load(data.state, 0) === phase.running) terminateRunningCode();
+  /**
+   * Asks again, and ends running code again, until the main thread has answered: it may start more code before it sees the
+   * request, and the request itself may be lost with the code that is ended.
+   */
+  const insist = (id: number, message: WireMessage, endsCode: boolean): NodeJS.Timeout => {
+    let idleBefore = false;
+    return setInterval(() => {
+      post({ type: "request", id, message });
+      if (!endsCode || Atomics.load(data.state, 0) !== phase.running) return;
+      endUserCode(idleBefore, (nobody) => {
+        idleBefore = nobody;
+      });
     }, patience);
+  };
 
   const receive = async (): Promise<void> => {
     for await (const frames of control) {
@@ -77,13 +122,11 @@ async function serve(port: MessagePort, data: ControlThreadData): Promise<void> 
       }
       const id = ++lastId;
       const type = message.header.msg_type;
-      if (type === "interrupt_request" || type === "shutdown_request") {
-        const timers = [endCode(id)];
-        if (type === "shutdown_request") {
-          timers.push(setTimeout(() => process.kill(process.pid, "SIGKILL"), shutdownPatience));
-        }
-        unanswered.set(id, timers);
+      const timers = [insist(id, message, type === "interrupt_request" || type === "shutdown_request")];
+      if (type === "shutdown_request") {
+        timers.push(setTimeout(() => process.kill(process.pid, "SIGKILL"), shutdownPatience));
       }
+      unanswered.set(id, timers);
       post({ type: "request", id, message });
     }
   };

@@ -20,10 +20,17 @@ export function readExportedNames(): ExportedNames {
   return JSON.parse(readFileSync(listFile, "utf8")) as ExportedNames;
 }
 
-/** Finds the exported names of a declaration file, with the compiler that cells are compiled with. */
-export function findExportedNames(declarations: string): ExportedNames {
+/**
+ * Finds the names that a compiled module exports: values by loading it, types with the compiler that cells are compiled
+ * with.
+ *
+ * @param module path of the compiled module; its declarations lie beside it
+ */
+export function findExportedNames(module: string): ExportedNames {
+  const values = Object.keys(require(module) as object).filter((name) => name !== "__esModule" && name !== "default");
   const path = require.resolve("@tslab/typescript-for-tslab", { paths: [require.resolve("tslab/package.json")] });
   const ts = require(path) as typeof import("@tslab/typescript-for-tslab");
+  const declarations = module.replace(/\.js$/, ".d.ts");
   const program = ts.createProgram([declarations], {
     module: ts.ModuleKind.ESNext,
     moduleResolution: ts.ModuleResolutionKind.Bundler,
@@ -33,20 +40,13 @@ export function findExportedNames(declarations: string): ExportedNames {
   });
   const checker = program.getTypeChecker();
   const source = program.getSourceFile(declarations);
-  const module = source && checker.getSymbolAtLocation(source);
-  if (!module) throw new Error(`${declarations} is not a module`);
-  const names: ExportedNames = { values: [], types: [] };
-  for (const symbol of checker.getExportsOfModule(module)) {
-    const target = symbol.flags & ts.SymbolFlags.Alias ? checker.getAliasedSymbol(symbol) : symbol;
-    if (symbol.name === "default") continue;
-    if (target.flags & ts.SymbolFlags.Value) names.values.push(symbol.name);
-    else names.types.push(symbol.name);
-  }
-  names.values.sort();
-  names.types.sort();
-  return names;
+  const symbol = source && checker.getSymbolAtLocation(source);
+  if (!symbol) throw new Error(`${declarations} is not a module`);
+  const all = checker.getExportsOfModule(symbol).map(({ name }) => name);
+  const types = all.filter((name) => name !== "default" && !values.includes(name));
+  return { values: values.sort(), types: types.sort() };
 }
 
 if (require.main === module) {
-  writeFileSync(listFile, `${JSON.stringify(findExportedNames(packageIndex.replace(/\.js$/, ".d.ts")), null, 1)}\n`);
+  writeFileSync(listFile, `${JSON.stringify(findExportedNames(packageIndex), null, 1)}\n`);
 }

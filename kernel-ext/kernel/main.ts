@@ -117,10 +117,13 @@ async function main(connectionFile: string): Promise<void> {
     });
   };
 
-  const early: { id: number; message: WireMessage }[] = [];
+  // The control thread repeats a request until it is answered; while the kernel starts that is enough of a queue.
+  let answered = 0;
   const answerControl = (id: number, message: WireMessage): void => {
-    if (!kernel) early.push({ id, message });
-    else toControl({ type: "reply", id, frames: kernel.control(message) });
+    if (!kernel || id <= answered) return;
+    const frames = kernel.control(message);
+    answered = id;
+    toControl({ type: "reply", id, frames });
   };
   const receiver = new Receiver(
     shellSocket,
@@ -196,7 +199,6 @@ async function main(connectionFile: string): Promise<void> {
   await started.runPrelude(preludeSource());
 
   kernel = started;
-  for (const { id, message } of early.splice(0)) answerControl(id, message);
   receiver.start();
 }
 
