@@ -3,7 +3,17 @@ import { readdirSync } from "node:fs";
 import { join } from "node:path";
 import { readNotebook } from "../../kernel-ext/command/notebookFile";
 import { type RunReport, runNotebook } from "../../kernel-ext/command/runNotebook";
-import { builtKernel, root } from "../kernel-ext/kernel/kernelSession";
+
+/** The project's folder. */
+export const root = join(__dirname, "..", "..");
+
+/** The built kernel, which `npm test` makes first. */
+const builtKernel = [
+  process.execPath,
+  "--no-force-async-hooks-checks",
+  join(root, "dist", "kernel-ext", "kernel", "main.js"),
+  "{connection_file}",
+];
 
 export const demoFolder = join(root, "notebooks-demo");
 
@@ -14,6 +24,6 @@ export const demoNames: readonly string[] = readdirSync(demoFolder)
 
 /** Runs a demo notebook as `cosmology-cells run` does, in its own folder, through the built kernel. */
 export function runDemo(name: string): Promise<RunReport> {
-  const kernel = { argv: builtKernel(), cwd: demoFolder };
+  const kernel = { argv: builtKernel, cwd: demoFolder };
   return runNotebook(readNotebook(join(demoFolder, name)), { kernel, timeout: 100_000 });
 }
