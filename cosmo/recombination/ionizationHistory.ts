@@ -29,8 +29,8 @@ export interface IonizationHistory {
 /** Radiation temperature at which the three-level atom takes over from Saha, K: z = 3500 at 2.7255 K for `calibrated`. */
 const kineticStart = { peebles: 2800 * 2.7255, calibrated: 3500 * 2.7255 };
 
-/** ln(y/(1-y)) below which helium's electrons no longer show: 1e-16 of an electron a hydrogen nucleus. */
-const heliumGone = -35;
+/** ln(y/(1-y)) below which helium's electrons no longer show: 1e-13 of an electron a hydrogen nucleus. */
+const heliumGone = -28;
 
 const tolerances = {
   full: { hydrogen: 1e-10, temperature: 1e-10, helium: 1e-9 },
@@ -97,7 +97,7 @@ export function equilibriumAt(t: number, gas: Gas) {
  * The three-level atom from Saha equilibrium down to today: tiers `peebles` and `calibrated`.
  *
  * Method: implicit Runge-Kutta collocation (Radau IIA, 5 stages) in ln(1+z); its collocation polynomial gives the fractions
- * between steps. Kinetic helium is dropped once it carries less than 1e-16 electrons a hydrogen nucleus.
+ * between steps. Kinetic helium is dropped once it carries less than 1e-13 electrons a hydrogen nucleus.
  */
 export function kineticHistory(
   evaluation: ModelEvaluation,

@@ -72,7 +72,9 @@ export function acousticScaleCell(model: ModelGivens): CellResult<AcousticScaleV
           compared.map((name) => {
             const printed = column.numbers[name]!;
             const symmetric = printed.upper === printed.lower;
-            const error = symmetric ? `± ${printed.upper}` : `+${printed.upper} −${printed.lower}`;
+            const places = printed.digits.split(".")[1]?.length ?? 0;
+            const [upper, lower] = [printed.upper!.toFixed(places), printed.lower!.toFixed(places)];
+            const error = symmetric ? `± ${upper}` : `+${upper} −${lower}`;
             return [name, `${printed.digits} ${error}`];
           }),
         ),

@@ -138,7 +138,9 @@ function distanceChart(
   const wide = highest > 10;
   const end = highest + (wide ? 0 : 0.05 * (highest - lowest));
   const grid = end > lowest ? spacedRedshifts(lowest, end, 120, wide ? "onePlusRedshift" : "linear") : [lowest];
-  const drawable = grid.filter((z) => distances.every((column) => computable(numbers, column[0]!.name, z)));
+  const drawable = grid.filter(
+    (z) => (!wide || z > 0) && distances.every((column) => computable(numbers, column[0]!.name, z)),
+  );
   if (drawable.length < 2) return [];
   // D_M of a flat model lies on D_C: one curve, named for both.
   const shown = distances.filter(
@@ -155,17 +157,17 @@ function distanceChart(
     x: drawable,
     y: drawable.map((z) => numbers.value(column[0]!.name, z)),
   }));
-  const points: PointSeries[] = shown.map((column) => ({
-    label: labelOf(column),
-    x: redshifts,
-    y: column.map((each) => each.value),
-  }));
+  const points: PointSeries[] = shown.map((column) => {
+    const kept = Array.from(redshifts.keys()).filter((row) => !wide || column[row]!.value > 0);
+    return { label: labelOf(column), x: kept.map((row) => redshifts[row]!), y: kept.map((row) => column[row]!.value) };
+  });
   return [
     lineChart({
       title: "Distances over redshift",
       description: `${shown.map(labelOf).join(", ")} in Mpc from z = ${lowest} to ${Number(end.toPrecision(3))}, the asked redshifts marked.`,
       x: { label: "redshift", symbol: "z", scale: wide ? "onePlusRedshift" : "linear" },
-      y: { label: "distance", unit: "Mpc", scale: "linear" },
+      // Far out D_L would flatten everything else.
+      y: { label: "distance", unit: "Mpc", scale: wide ? "log" : "linear" },
       series,
       points,
     }),

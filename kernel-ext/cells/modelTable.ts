@@ -1,5 +1,5 @@
 import type { ClosedModel } from "../../cosmo/model";
-import { formatNumber, symbolText, type Table, type TableRow, table } from "../display";
+import { formatNumber, type Table, type TableRow, table } from "../display";
 
 /**
  * The closed model: parameters, and the conventions that published numbers differ by. Printed with every result.
@@ -26,9 +26,9 @@ export function modelTable(model: ClosedModel, tiers: readonly string[] = [model
     title: "Model",
     columns: [
       { key: "field", label: "parameter" },
-      { key: "symbol", label: "symbol", format: (symbol) => symbolText(String(symbol)) },
+      { key: "symbol", label: "symbol", symbols: true },
       { key: "value", label: "value", align: "right" },
-      { key: "unit", label: "unit", format: (unit) => String(unit) },
+      { key: "unit", label: "unit", symbols: true },
     ],
     rows,
     notes: [

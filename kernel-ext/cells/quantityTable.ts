@@ -1,6 +1,6 @@
 import type { QuantityValue } from "../../cosmo/quantity";
 import { citation } from "../../cosmo/sources";
-import { formatNumber, type SourceLine, symbolText, type Table, type TableRow, table } from "../display";
+import { formatNumber, type SourceLine, type Table, type TableRow, table } from "../display";
 
 /** Digits shown of a quantity: what a paper would print and two more, all of them computed. */
 const shownDigits = 8;
@@ -13,7 +13,7 @@ const shownDigits = 8;
 export function quantityTable(title: string, values: readonly QuantityValue[], notes: readonly string[] = []): Table {
   const rows: TableRow[] = values.map((each) => ({
     quantity: describe(each),
-    symbol: symbolText(each.symbol),
+    symbol: each.symbol,
     value: roundedToError(each),
     unit: each.unit,
     error: each.error,
@@ -22,9 +22,9 @@ export function quantityTable(title: string, values: readonly QuantityValue[], n
     title,
     columns: [
       { key: "quantity", label: "quantity" },
-      { key: "symbol", label: "symbol" },
+      { key: "symbol", label: "symbol", symbols: true },
       { key: "value", label: "value", digits: shownDigits },
-      { key: "unit", label: "unit", format: (unit) => String(unit) },
+      { key: "unit", label: "unit", symbols: true },
       { key: "error", label: "numerical error", digits: 1 },
     ],
     rows,

@@ -42,7 +42,8 @@ export function soundHorizonCell(model: ModelGivens): CellResult<SoundHorizonVal
   ] as const);
   const speed = numbers.quantity("soundSpeed", values.lastScatteringRedshift);
   const loading = numbers.quantity("baryonLoading", values.lastScatteringRedshift);
-  const end = Math.min(values.dragRedshift, values.lastScatteringRedshift);
+  // A little past the later of the two, so that their marks stand inside the plot.
+  const end = 0.8 * Math.min(values.dragRedshift, values.lastScatteringRedshift);
   const grid = Float64Array.from(spacedRedshifts(end, 1e5, 200, "onePlusRedshift"));
   const horizon = grid.map((z) => numbers.value("soundHorizon", z));
   const everything = [...list, speed, loading];
@@ -52,7 +53,7 @@ export function soundHorizonCell(model: ModelGivens): CellResult<SoundHorizonVal
     charts: [
       lineChart({
         title: "Growth of the sound horizon",
-        description: `Comoving sound horizon from z = 100000 to the drag epoch; r_* = ${values.lastScatteringSoundHorizon.toFixed(2)} Mpc at z_*, r_drag = ${values.dragSoundHorizon.toFixed(2)} Mpc at z_drag. Time runs to the right.`,
+        description: `Comoving sound horizon from z = 100000 past the drag epoch; r_* = ${values.lastScatteringSoundHorizon.toFixed(2)} Mpc at z_*, r_drag = ${values.dragSoundHorizon.toFixed(2)} Mpc at z_drag. Time runs to the right.`,
         x: { label: "redshift", symbol: "z", scale: "onePlusRedshift", reverse: true },
         y: { label: "comoving sound horizon", symbol: "r_s", unit: "Mpc" },
         series: [{ label: "r_s(z)", x: grid, y: horizon }],

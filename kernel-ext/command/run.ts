@@ -103,7 +103,7 @@ export async function runCommand(args: string[]): Promise<number> {
     const target = join(settings.out, `${name}.ipynb`);
     const { notebook, failures } = await runToFolder(path, target, settings);
     const report = join(settings.out, `${name}.html`);
-    writeWhole(report, notebookToHtml(notebook, { title: name }));
+    writeWhole(report, notebookToHtml(notebook));
     say(`${name}: wrote ${target} and ${report}`);
     if (failures.length > 0) failed = true;
   }
