@@ -11,7 +11,7 @@ import { antipodeNote, transverseDistance } from "./transverseDistance";
  *
  * @param from z1, 0 or more; @param to z2, at or above z1. Beyond the turning point of a closed model: NoAnswerError.
  * Accuracy 1e-12. Source: Hogg 1999, eqs 18 and 19.
- * @example angularDiameterDistance(evaluation, 0, 1.6).value // its maximum, near 1770 for Planck's parameters
+ * @example angularDiameterDistance(evaluation, 0, 1.6).value // 1794 near Planck's parameters, its maximum
  */
 export function angularDiameterDistance(
   evaluation: ModelEvaluation,

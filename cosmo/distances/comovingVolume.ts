@@ -18,7 +18,7 @@ const where = "comovingVolume";
  * Method: closed form in D_C, with a series for small curvature; a shell by quadrature over its depth, so that a thin one loses no
  * digits. Accuracy 4e-12.
  * Source: Hogg 1999, eq. 29.
- * @example comovingVolume(evaluation, 0, 1).value // 160 near Planck's parameters
+ * @example comovingVolume(evaluation, 0, 1).value // 165 near Planck's parameters
  */
 export function comovingVolume(evaluation: ModelEvaluation, from: number, to: number): Computed {
   requireNotNegative(from, where);

@@ -10,7 +10,7 @@ import { antipodeNote, transverseDistance } from "./transverseDistance";
  *
  * @param z redshift, 0 or more. Beyond the turning point of a closed model: NoAnswerError. Accuracy 2e-12.
  * Source: Hogg 1999, eq. 28, times 4 pi.
- * @example comovingVolumeElement(evaluation, 1).value // 354 near Planck's parameters
+ * @example comovingVolumeElement(evaluation, 1).value // 361 near Planck's parameters
  */
 export function comovingVolumeElement(evaluation: ModelEvaluation, z: number): Computed {
   const transverse = transverseDistance(evaluation, 0, z, "comovingVolumeElement");

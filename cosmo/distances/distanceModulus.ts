@@ -22,7 +22,7 @@ const positiveRedshift: QuantityArgument = {
  *
  * @param z redshift above 0; 0 and below: DomainError. Beyond the turning point of a closed model: NoAnswerError.
  * Accuracy 1e-12, relative; near z = 2e-9, where mu crosses 0, 2e-12 mag. Source: Hogg 1999, eq. 25.
- * @example distanceModulus(evaluation, 1).value // 44.1 near Planck's parameters
+ * @example distanceModulus(evaluation, 1).value // 44.16 near Planck's parameters
  */
 export function distanceModulus(evaluation: ModelEvaluation, z: number): Computed {
   if (!positiveRedshift.accepts(z)) {

@@ -178,7 +178,8 @@ export function redshiftAt(
     return form(distanceThere, curvedSine(distanceThere, curvature), stretch, rate, curvature);
   };
   const at = (s: number) => {
-    const nearest = Math.min(nodes.length - 1, Math.round(s / nodes[1]!));
+    // From below: a bounced model's turning point, where the integrand is singular, is then met only when it is asked for.
+    const nearest = Math.min(nodes.length - 1, Math.floor(s / nodes[1]!));
     const step = comovingDistance(evaluation, Math.expm1(nodes[nearest]!), Math.expm1(s), where);
     return shaped(s, along[nearest]! + step.value);
   };

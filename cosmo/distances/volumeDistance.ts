@@ -10,7 +10,7 @@ import { antipodeNote, transverseDistance } from "./transverseDistance";
  *
  * @param z redshift, 0 or more. Beyond the turning point of a closed model: NoAnswerError. Accuracy 1e-12.
  * Source: Eisenstein et al. 2005, eq. 2.
- * @example volumeDistance(evaluation, 0.35).value // 1350 near Planck's parameters
+ * @example volumeDistance(evaluation, 0.35).value // 1377 near Planck's parameters
  */
 export function volumeDistance(evaluation: ModelEvaluation, z: number): Computed {
   const transverse = transverseDistance(evaluation, 0, z, "volumeDistance");

@@ -8,7 +8,7 @@ const where = "accelerationRedshift";
 /** The search in ln a: from long before dark energy of any kind to long after today. */
 const earliest = -16;
 const latest = 30;
-const points = 1840;
+const points = 460;
 
 /**
  * Redshift at which the expansion turned from slowing down to speeding up: q = 0.
@@ -16,7 +16,7 @@ const points = 1840;
  * sum (rho + 3 P) = 0, neutrino pressure by the exact Fermi-Dirac integral. The latest such turn up to today; where there is
  * none, the first one still to come (below 0). A model that never turns: NoAnswerError.
  *
- * Method: scan in ln a from -16 to 30 in steps of 0.025, then Brent's method. Accuracy 1e-12 in 1+z.
+ * Method: scan in ln a from -16 to 30 in steps of 0.1, then Brent's method. Accuracy 1e-12 in 1+z.
  * Source: common practice, no source (second Friedmann equation).
  * @example accelerationRedshift(evaluation).value // 0.63 near Planck's parameters
  */

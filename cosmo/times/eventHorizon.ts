@@ -24,7 +24,7 @@ const where = "eventHorizon";
  * Method: adaptive Gauss-Kronrod in ln a up to today; beyond, for wa = 0 in u = a^((1 + 3 w0)/2), which brings infinity to 0
  * with a smooth integrand, for wa > 0 in ln a until the integrand has fallen by 1e-20. Accuracy 1e-12.
  * Source: Rindler's definition; common practice, no source.
- * @example eventHorizon(evaluation, 0).value // 5150 near Planck's parameters
+ * @example eventHorizon(evaluation, 0).value // 5114 near Planck's parameters
  */
 export function eventHorizon(evaluation: ModelEvaluation, z: number): NumericalResult {
   requireRedshift(evaluation, z, where);

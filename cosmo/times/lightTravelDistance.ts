@@ -10,7 +10,7 @@ import { timeIntegral } from "./lookbackTime";
  *
  * @param from z1, @param to z2: above -1. Method, domain and accuracy as lookbackTime.
  * Source: Hogg 1999, eq. 30, times c.
- * @example lightTravelDistance(evaluation, 0, 1).value // 2430 near Planck's parameters
+ * @example lightTravelDistance(evaluation, 0, 1).value // 2438 near Planck's parameters
  */
 export function lightTravelDistance(evaluation: ModelEvaluation, from: number, to: number): NumericalResult {
   return timeIntegral(evaluation, from, to, unitHubbleDistance, "lightTravelDistance");

@@ -16,7 +16,7 @@ import { redshiftArgument } from "../quantity";
  *
  * @param from z1, @param to z2: above -1. Beyond the turning point of a closed model: NoAnswerError.
  * Method: adaptive Gauss-Kronrod in ln(1+z). Accuracy 1e-12. Source: Hogg 1999, eq. 30.
- * @example lookbackTime(evaluation, 0, 1).value // 7.9 near Planck's parameters
+ * @example lookbackTime(evaluation, 0, 1).value // 7.95 near Planck's parameters
  */
 export function lookbackTime(
   evaluation: ModelEvaluation,

@@ -19,7 +19,7 @@ const distance = askedValue("distance", "d", "Mpc");
  *
  * @param time Gyr, 0 or more; as long as the age of the universe, or longer: NoAnswerError.
  * Method: Brent's method in ln(1+z) on the lookback time. Accuracy 1e-12 of 1+z, less close to the age. Source: Hogg 1999, eq. 30, inverted.
- * @example redshiftAtLookbackTime(evaluation, 8).value // 1.03 near Planck's parameters
+ * @example redshiftAtLookbackTime(evaluation, 8).value // 1.01 near Planck's parameters
  */
 export function redshiftAtLookbackTime(evaluation: ModelEvaluation, value: number): Computed {
   return solveTime(evaluation, value, time, unitHubbleTime, "redshiftAtLookbackTime", "lookback time");
