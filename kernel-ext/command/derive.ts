@@ -64,7 +64,7 @@ export async function deriveCommand(args: readonly string[], streams: CommandStr
     if (refusal instanceof ClosedPipeError) return closedPipe;
     if (!(refusal instanceof Refusal)) throw refusal;
     const { cause: error, code } = refusal;
-    if (error instanceof TableError) say(`derive: ${error.message}`, error.hint);
+    if (error instanceof TableError) say(`derive ${error.message}`, error.hint);
     else if (error instanceof CosmologyError) say(error.message, error.hint);
     else if (error instanceof CommandError) say(error.message, "the options: cosmology-cells derive --help");
     else throw error;

@@ -28,8 +28,12 @@ export function parseFill(lists: readonly string[], recombination: string | unde
       });
     }
     if (values.has(name)) {
-      const twice = recombination !== undefined && name === "recombination" ? "--set and --recombination" : "--set";
-      throw new CommandError(`derive: ${twice} give ${describeValue(name)} twice`);
+      const both = recombination !== undefined && name === "recombination";
+      throw new CommandError(
+        both
+          ? "derive: --set and --recombination both give the tier"
+          : `derive: --set gives ${describeValue(name)} twice`,
+      );
     }
     const parsed = valueOfText(field, value);
     if ("reason" in parsed) throw new DomainError({ where, argument: name, rule: parsed.reason, value });
