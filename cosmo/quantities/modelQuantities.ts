@@ -11,7 +11,12 @@ interface ModelNumber {
   readonly equation: string;
   readonly read: (model: ClosedModel) => number;
   readonly sources?: (model: ClosedModel) => readonly SourceKey[];
+  /** Relative; rounding unless given. */
+  readonly accuracy?: number;
 }
+
+/** What the tables behind the Fermi-Dirac integral are good for. */
+const fermiDiracAccuracy = 1e-14;
 
 const constantsSource = (model: ClosedModel): readonly SourceKey[] => [model.conventions.constants];
 
@@ -75,6 +80,7 @@ const modelNumbers: readonly ModelNumber[] = [
     equation: String.raw`\omega_\nu = \frac{15}{\pi^4}\left(\frac{T_\nu}{T}\right)^4 \omega_\gamma \sum_i \int_0^\infty \frac{x^2\sqrt{x^2+y_i^2}}{e^x+1}\,dx`,
     read: (model) => model.neutrinoDensity,
     sources: constantsSource,
+    accuracy: fermiDiracAccuracy,
   },
   {
     name: "darkEnergyDensity",
@@ -134,6 +140,7 @@ const modelNumbers: readonly ModelNumber[] = [
     equation: String.raw`\Omega_\nu = \omega_\nu/h^2`,
     read: (model) => model.neutrinoFraction,
     sources: constantsSource,
+    accuracy: fermiDiracAccuracy,
   },
   {
     name: "darkEnergyFraction",
@@ -234,7 +241,7 @@ const modelNumbers: readonly ModelNumber[] = [
 
 /** Today's numbers of the closed model as quantities: densities, fractions, and what they stand on. Accuracy: rounding. */
 export const modelQuantities: readonly ModelQuantity[] = modelNumbers.map(
-  ({ name, symbol, unit, description, equation, read, sources }) => ({
+  ({ name, symbol, unit, description, equation, read, sources, accuracy = 1e-15 }) => ({
     name,
     symbol,
     unit,
@@ -242,8 +249,11 @@ export const modelQuantities: readonly ModelQuantity[] = modelNumbers.map(
     description,
     equation,
     method: "read from the closed model",
-    accuracy: 1e-15,
+    accuracy,
     sources: sources ?? [],
-    compute: (evaluation) => ({ value: read(evaluation.model), error: 0 }),
+    compute: (evaluation) => {
+      const value = read(evaluation.model);
+      return { value, error: accuracy * Math.abs(value) };
+    },
   }),
 );

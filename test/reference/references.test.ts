@@ -108,7 +108,14 @@ describe("reference values", () => {
       for (const row of file.rows) {
         const [model, ...numbers] = row;
         const expected = numbers[numbers.length - 2]!;
-        const value = numbersOf(model, tier).value(file.quantity, ...numbers.slice(0, -2));
+        const asked = numbersOf(model, tier);
+        const values = numbers.slice(0, -2);
+        const value = asked.value(file.quantity, ...values);
+        // What does not hang on an integrated history knows its own error.
+        if (definition!.usesHistory !== true && tier === undefined) {
+          const { error } = asked.quantity(file.quantity, ...values);
+          expect(Math.abs(value - expected), row.join(" ")).toBeLessThanOrEqual(error);
+        }
         const off = difference(value, expected);
         if (!(off <= worst)) {
           worst = off;
