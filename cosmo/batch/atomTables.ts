@@ -9,11 +9,11 @@ import {
 import { electronStates, levelTemperature, sahaLogarithms } from "../recombination/sahaFactors";
 import { gridSize, gridStep, gridTemperatures, gridTop, heliumEnd } from "./temperatureGrid";
 
-/** Numbers a point in {@link AtomTables.hydrogen}: alpha, beta, beta e^(-L_a/kT), each with two Taylor coefficients in d. */
-export const hydrogenStride = 9;
+/** Numbers a point in {@link AtomTables.hydrogen}: alpha T_r^3, beta, beta e^(-L_a/kT), each with two Taylor coefficients in d; T_r^3. */
+export const hydrogenStride = 10;
 
 /** Numbers a point in {@link AtomTables.helium}; see {@link heliumRow}. */
-export const heliumStride = 12;
+export const heliumStride = 11;
 
 /** Every rate of the three-level atom that depends on T_r alone, tabulated from the functions of the single model. */
 export interface AtomTables {
@@ -55,7 +55,7 @@ function writeSeries(out: Float64Array, at: number, f: (temperature: number) => 
 /**
  * Helium's coefficients at one temperature: a_s, a_t, 4 G e^(-L_He/kT) with its first Taylor coefficient in d, then what the escape
  * needs: 3 A_s e^(-(L_2p - L_2s)/kT), b_s, A_t e^(-(L_3P - L_3S)/kT), b_t, the depth of either line over f_He n_H (1 - y)/H and
- * g of either line over f_He (1 - y)/(1 - x_p).
+ * g of the singlet line over f_He (1 - y)/(1 - x_p).
  */
 function heliumRow(out: Float64Array, at: number, temperature: number, constants: ConstantsSet): void {
   const perLevel = levelTemperature(constants) / temperature;
@@ -79,12 +79,11 @@ function heliumRow(out: Float64Array, at: number, temperature: number, constants
     (2 * constants.boltzmann * temperature) / (atoms.heliumMassInUnits * constants.atomicMassUnit),
   );
   const depth = (rate: number, level: number) => (3 * rate) / (8 * Math.PI * level ** 3);
-  const continuum = (rate: number, level: number, crossSection: number) =>
-    (3 * rate) / (8 * Math.PI ** 1.5 * crossSection * level ** 3 * speed);
   out[at + 8] = depth(atoms.heliumSingletRate, atoms.heliumSinglet2p);
   out[at + 9] = depth(atoms.heliumTripletRate, atoms.heliumTriplet2p);
-  out[at + 10] = continuum(atoms.heliumSingletRate, atoms.heliumSinglet2p, atoms.hydrogenCrossSectionAtSinglet);
-  out[at + 11] = continuum(atoms.heliumTripletRate, atoms.heliumTriplet2p, atoms.hydrogenCrossSectionAtTriplet);
+  out[at + 10] =
+    (3 * atoms.heliumSingletRate) /
+    (8 * Math.PI ** 1.5 * atoms.hydrogenCrossSectionAtSinglet * atoms.heliumSinglet2p ** 3 * speed);
 }
 
 const known = new Map<string, AtomTables>();
@@ -105,6 +104,8 @@ export function atomTables(tier: "peebles" | "calibrated", constants: ConstantsS
   for (let i = 0; i < gridSize; i++) {
     const temperature = gridTemperatures[i];
     writeSeries(hydrogen, i * hydrogenStride, alpha, temperature);
+    hydrogen[i * hydrogenStride] *= temperature ** 3;
+    hydrogen[i * hydrogenStride + 9] = temperature ** 3;
     writeSeries(hydrogen, i * hydrogenStride + 3, beta, temperature);
     writeSeries(hydrogen, i * hydrogenStride + 6, ground, temperature);
     if (i < heliumEnd) {

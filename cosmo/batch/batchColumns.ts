@@ -14,7 +14,7 @@ export interface Slot {
 }
 
 /** The value of a slot in a row. */
-export function valueOf(slot: Slot, row: number): number {
+export function slotValue(slot: Slot, row: number): number {
   return slot.column === undefined ? slot.constant : slot.column[row];
 }
 
@@ -89,11 +89,11 @@ export function givensOfRow(bound: BoundColumns, row: number): ModelGivens {
     else givens[group] = { ...(givens[group] as object | undefined), [inner]: value };
   };
   for (const [name, word] of bound.words) put(name, word);
-  for (const [name, slot] of bound.numbers) put(name, valueOf(slot, row));
+  for (const [name, slot] of bound.numbers) put(name, slotValue(slot, row));
   if (bound.masses !== undefined) {
     put(
       "neutrinos.masses",
-      bound.masses.map((slot) => valueOf(slot, row)),
+      bound.masses.map((slot) => slotValue(slot, row)),
     );
   }
   return givens as ModelGivens;

@@ -10,7 +10,7 @@ import {
 import { Evaluation } from "../quantity";
 import { gasPart, heliumToHydrogenRatio } from "../recombination";
 import { nucleosynthesisHelium } from "../recombination/nucleosynthesisHelium";
-import { type BoundColumns, type Slot, valueOf } from "./batchColumns";
+import { type BoundColumns, type Slot, slotValue } from "./batchColumns";
 import type { BatchRow } from "./batchRow";
 import { isInsideRange } from "./validatedRange";
 
@@ -96,33 +96,33 @@ export class RowCloser {
 
   /** Fills the row; false where it is not a plain model inside the validated range. */
   close(index: number, row: BatchRow): boolean {
-    const hubbleValue = valueOf(this.hubble, index);
+    const hubbleValue = slotValue(this.hubble, index);
     const h = this.hubbleIsReduced ? hubbleValue : hubbleValue / 100;
     row.reducedHubble = h;
     row.hubble = this.hubbleIsReduced ? 100 * hubbleValue : hubbleValue;
     const h2 = h * h;
     if (!this.closeNeutrinos(index, row)) return false;
-    const baryons = valueOf(this.baryons, index);
+    const baryons = slotValue(this.baryons, index);
     row.baryonDensity = this.baryonsAreFraction ? baryons * h2 : baryons;
-    const given = valueOf(this.cold, index);
+    const given = slotValue(this.cold, index);
     const cold = this.coldIsFraction ? given * h2 : given;
     row.coldMatterDensity = this.coldKind === "cold" ? cold : cold - row.baryonDensity - row.neutrinoDensity;
     row.matterDensity = row.baryonDensity + row.coldMatterDensity + row.neutrinoDensity;
     const rest = row.matterDensity / h2 + (this.radiationInside ? row.radiationDensity / h2 : 0);
     if (this.closesByDarkEnergy) {
-      const value = valueOf(this.darkEnergy, index);
+      const value = slotValue(this.darkEnergy, index);
       row.darkEnergyFraction = this.darkEnergyIsFraction ? value : value / h2;
       row.curvature = 1 - rest - row.darkEnergyFraction;
       if (Math.abs(row.curvature) < 4 * Number.EPSILON) row.curvature = 0;
     } else {
-      row.curvature = valueOf(this.curvature, index);
+      row.curvature = slotValue(this.curvature, index);
       row.darkEnergyFraction = 1 - row.curvature - rest;
       if (Math.abs(row.darkEnergyFraction) < 4 * Number.EPSILON) row.darkEnergyFraction = 0;
     }
     row.darkEnergyDensity = row.darkEnergyFraction * h2;
-    row.w0 = valueOf(this.w0, index);
-    row.wa = valueOf(this.wa, index);
-    const helium = valueOf(this.helium, index);
+    row.w0 = slotValue(this.w0, index);
+    row.wa = slotValue(this.wa, index);
+    const helium = slotValue(this.helium, index);
     row.helium = this.helium === absent ? nucleosynthesisHelium(row.baryonDensity, row.effectiveNumber) : helium;
     row.hydrogenDensity = (1 - row.helium) * row.baryonDensity * this.gas.hydrogenDensity;
     row.heliumRatio = heliumToHydrogenRatio(row.helium);
@@ -134,8 +134,8 @@ export class RowCloser {
   /** Photons and neutrinos, anew only where the row differs from the one before. */
   private closeNeutrinos(index: number, row: BatchRow): boolean {
     const { held, mass } = this;
-    const effectiveNumber = valueOf(this.effectiveNumber, index);
-    const temperature = valueOf(this.temperature, index);
+    const effectiveNumber = slotValue(this.effectiveNumber, index);
+    const temperature = slotValue(this.temperature, index);
     if (!this.readMasses(index)) return false;
     if (
       held[0] === effectiveNumber &&
@@ -183,7 +183,7 @@ export class RowCloser {
   private readMasses(index: number): boolean {
     const { mass } = this;
     if (this.massSum !== undefined) {
-      const sum = valueOf(this.massSum, index);
+      const sum = slotValue(this.massSum, index);
       if (!(sum >= 0)) return false;
       if (this.ordering === "oneMassive") {
         mass[0] = sum;
@@ -197,7 +197,7 @@ export class RowCloser {
     }
     mass.fill(0);
     for (let m = 0; m < this.masses.length; m++) {
-      mass[m] = valueOf(this.masses[m], index);
+      mass[m] = slotValue(this.masses[m], index);
       if (!(mass[m] >= 0)) return false;
     }
     if (mass[0] < mass[1]) swap(mass, 0, 1);

@@ -16,8 +16,8 @@ const topTemperature = 8450;
 /** ln of the temperature at the top. */
 export const gridTop = Math.log(topTemperature);
 
-/** Points in equilibrium that the five-step formula starts from. */
-export const equilibriumPoints = 5;
+/** Points in equilibrium that the six-step formula starts from. */
+export const equilibriumPoints = 6;
 
 /** A run of points with one stride. */
 export interface GridBlock {
