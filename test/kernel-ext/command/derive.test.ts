@@ -208,6 +208,16 @@ describe("derive", () => {
     });
   });
 
+  it("rows depend on themselves alone: two halves of a file give the rows of the whole", async () => {
+    const [header, ...rows] = csv.trimEnd().split("\n");
+    const add = ["-", "--add", "lastScatteringRedshift,age", "--recombination", "peebles"];
+    const whole = await runDerive(add, csv);
+    const first = await runDerive(add, `${header}\n${rows.slice(0, 1).join("\n")}\n`);
+    const second = await runDerive([...add, "--header", "no"], `${header}\n${rows.slice(1).join("\n")}\n`);
+    expect(rows.length).toBeGreaterThan(2);
+    expect(first.stdout + second.stdout).toBe(whole.stdout);
+  });
+
   it("an empty table gives its header", async () => {
     const run = await runDerive(["-", "--add", "age"], "hubble,baryonDensity\n");
     expect(run).toEqual({ code: 0, stdout: "hubble,baryonDensity,age\n", stderr: "" });

@@ -173,7 +173,8 @@ const brokenFiles: Broken[] = [
     name: "no baryons to recombine",
     text: third("67.4,0,0.12"),
     add: "lastScatteringRedshift",
-    message: 'row 3 of column "lastScatteringRedshift": recombination: this model has no baryons (baryonDensity 0), so nothing recombines',
+    message:
+      'row 3 of column "lastScatteringRedshift": recombination: this model has no baryons (baryonDensity 0), so nothing recombines',
   },
   {
     name: "a model that had no Big Bang",
