@@ -1,7 +1,7 @@
 /** The demo notebooks, and how the tests run them. */
 import { readdirSync } from "node:fs";
 import { join } from "node:path";
-import { readNotebook } from "../../kernel-ext/command/notebookFile";
+import { type NotebookFile, readNotebook } from "../../kernel-ext/command/notebookFile";
 import { type RunReport, runNotebook } from "../../kernel-ext/command/runNotebook";
 
 /** The project's folder. */
@@ -22,8 +22,12 @@ export const demoNames: readonly string[] = readdirSync(demoFolder)
   .filter((name) => name.endsWith(".ipynb"))
   .sort();
 
-/** Runs a demo notebook as `cosmology-cells run` does, in its own folder, through the built kernel. */
+/** Runs a notebook in the folder of the demos, through the built kernel. */
+export function runNotebookHere(notebook: NotebookFile): Promise<RunReport> {
+  return runNotebook(notebook, { kernel: { argv: builtKernel, cwd: demoFolder }, timeout: 100_000 });
+}
+
+/** Runs a demo notebook as `cosmology-cells run` does. */
 export function runDemo(name: string): Promise<RunReport> {
-  const kernel = { argv: builtKernel, cwd: demoFolder };
-  return runNotebook(readNotebook(join(demoFolder, name)), { kernel, timeout: 100_000 });
+  return runNotebookHere(readNotebook(join(demoFolder, name)));
 }

@@ -1,0 +1,73 @@
+/** What README.md and CHANGELOG.md state, against what the program does. */
+import { existsSync, readFileSync } from "node:fs";
+import { join } from "node:path";
+import { describe, expect, it } from "vitest";
+import type { CodeCell, NotebookFile } from "../../kernel-ext/command/notebookFile";
+import { plainText } from "../../kernel-ext/command/notebookFile";
+import { referenceBounds } from "../reference/bounds";
+import { root, runNotebookHere } from "./demoNotebooks";
+
+const text = (file: string): string => readFileSync(join(root, file), "utf8");
+const readme = text("README.md");
+
+describe("README.md", () => {
+  it("its examples run in the kernel one after another, and give the number they print", async () => {
+    const sources = [...readme.matchAll(/```ts\n([\s\S]*?)```/g)].map((match) => match[1]!);
+    expect(sources.length).toBe(2);
+    const cells = sources.map((source, index): CodeCell => {
+      return { cell_type: "code", id: `c${index}`, metadata: {}, source, execution_count: null, outputs: [] };
+    });
+    cells.push({ ...cells[0]!, id: "ruler", source: "ruler.toFixed(2)" });
+    const notebook: NotebookFile = { nbformat: 4, nbformat_minor: 5, metadata: {}, cells };
+    const { failures, notebook: executed } = await runNotebookHere(notebook);
+    expect(failures).toEqual([]);
+    const [shown] = (executed.cells.at(-1) as CodeCell).outputs;
+    const ruler = shown?.output_type === "execute_result" ? plainText(shown.data["text/plain"] as string) : "";
+    expect(ruler).toMatch(/^\D*147\.07\D*$/);
+    expect(sources[1]).toContain("// 147.07 Mpc");
+  });
+
+  it("its helpers are exported, and the files it names exist", async () => {
+    const index = text("kernel-ext/index.ts");
+    const helpers = [...readme.matchAll(/`(\w+Cell)\(/g)].map((match) => match[1]!);
+    expect(helpers.length).toBe(5);
+    for (const helper of helpers) expect(index).toMatch(new RegExp(`\\b${helper}\\b`));
+    const files = [...readme.matchAll(/\b(?:notebooks-demo|test|cosmo)\/[\w./-]+\w/g)].map((match) => match[0]);
+    expect(files.length).toBeGreaterThan(3);
+    for (const file of files) expect(existsSync(join(root, file)), file).toBe(true);
+  });
+
+  it("its table of accuracy is that of the reference tests", () => {
+    const worst = (pattern: RegExp): [string, string] => {
+      const found = Object.entries(referenceBounds).filter(([name]) => pattern.test(name));
+      expect(found.length).toBeGreaterThan(0);
+      const most = (column: 0 | 1): number => Math.max(...found.map(([, figures]) => figures[column]));
+      return [String(most(1)), String(most(0))];
+    };
+    const row = (start: string): string[] => {
+      const line = readme.split("\n").find((each) => each.startsWith(`| ${start}`))!;
+      return line
+        .split("|")
+        .slice(2, 4)
+        .map((cell) => String(Number(cell)));
+    };
+    const background =
+      /(^|[a-z])(Distance|Horizon|Time|Volume|VolumeElement|Modulus|Scale|Rate)(\.between)?$|^age(At)?$/;
+    expect(row("distances, volumes, times, H(z)")).toEqual(worst(background));
+    expect(row("x_e, Saha")).toEqual(worst(/^residualIonizedFraction\.saha$/));
+    expect(row("x_e, the two three-level tiers")).toEqual(worst(/^residualIonizedFraction\.(peebles|calibrated)$/));
+    expect(row("z_*, z_drag")).toEqual(worst(/^(lastScattering|drag)Redshift\./));
+    expect(row("r_*, r_drag")).toEqual(
+      worst(/^(lastScatteringSoundHorizon|dragSoundHorizon|acousticAngle|acousticMultipole)\./),
+    );
+    expect(row("k_D")).toEqual(worst(/^dampingWavenumber\./));
+  });
+});
+
+describe("CHANGELOG.md", () => {
+  it("names the coefficients of the calibrated tier as they stand in the code", () => {
+    const { coefficients } = JSON.parse(text("cosmo/recombination/calibrationCoefficients.json"));
+    expect(coefficients.length).toBe(3);
+    for (const coefficient of coefficients) expect(text("CHANGELOG.md")).toContain(String(coefficient));
+  });
+});
