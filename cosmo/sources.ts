@@ -269,6 +269,25 @@ const bibliography = {
     reference: "MNRAS 291, L33",
     eprint: "astro-ph/9702100",
   },
+  planck1901: {
+    authors: "Planck",
+    year: 1901,
+    title: "Ueber das Gesetz der Energieverteilung im Normalspectrum",
+    reference: "Ann. Phys. 309, 553",
+  },
+  wien1893: {
+    authors: "Wien",
+    year: 1893,
+    title: "Eine neue Beziehung der Strahlung schwarzer Korper zum zweiten Hauptsatz der Warmetheorie",
+    reference: "Sitzungsber. Akad. Wiss. Berlin, 55",
+  },
+  cie2004: {
+    authors: "International Commission on Illumination",
+    year: 2004,
+    title: "Colorimetry, 3rd edition",
+    reference: "CIE 15:2004, table T.4 and illuminant A",
+    memory: true,
+  },
   hairerWanner1999: {
     authors: "Hairer & Wanner",
     year: 1999,

@@ -13,6 +13,14 @@ import {
   soundSpeedQuantity,
 } from "../acoustics";
 import {
+  backgroundBrightnessQuantity,
+  blackbodyChromaticityXQuantity,
+  blackbodyChromaticityYQuantity,
+  photonNumberDensityQuantity,
+  wienFrequencyQuantity,
+  wienWavelengthQuantity,
+} from "../blackbody";
+import {
   alcockPaczynskiRatioQuantity,
   angularDiameterDistanceQuantity,
   comovingDistanceQuantity,
@@ -62,6 +70,7 @@ import {
   visibilityWidthQuantity,
 } from "../lastScattering";
 import {
+  baryonToPhotonRatioQuantity,
   hydrogenIonizedFractionQuantity,
   matterTemperatureQuantity,
   radiationTemperatureQuantity,
@@ -151,6 +160,13 @@ const quantities: readonly ModelQuantity[] = [
   dampingAngleQuantity,
   equalityHorizonAngleQuantity,
   equalitySoundAngleQuantity,
+  photonNumberDensityQuantity,
+  baryonToPhotonRatioQuantity,
+  wienWavelengthQuantity,
+  wienFrequencyQuantity,
+  backgroundBrightnessQuantity,
+  blackbodyChromaticityXQuantity,
+  blackbodyChromaticityYQuantity,
 ];
 
 /** The register: quantities by name. */

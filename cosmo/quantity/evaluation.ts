@@ -1,14 +1,34 @@
+import type { ValidityNote } from "./validityNote";
+
 /**
  * One piece of work on one model: a history, a depth, an expansion. Named for profiles; its identity is the key under which
- * an {@link Evaluation} keeps the result.
+ * an {@link Evaluation} keeps the result. Its functions are written as methods so that a part, and an evaluation, of a model with more
+ * fields may stand where one with fewer is asked for.
  */
 export interface Part<M, T> {
   readonly name: string;
-  readonly compute: (evaluation: Evaluation<M>) => T;
+  compute(evaluation: Evaluation<M>): T;
+  /** What every number that stands on this part should say: a neglect, an interpolation. Asked only of parts that were used. */
+  notes?(evaluation: Evaluation<M>): readonly ValidityNote[];
+  /**
+   * Whether the part stands on something that the model itself knows only approximately, such as a table: every number that uses it
+   * is then measured against the coarse evaluation, which must treat that thing in another way.
+   */
+  approximate?(model: M): boolean;
 }
 
 /** `full`: the settings behind the stated accuracies. `coarse`: looser ones, run only to measure the error of the full ones. */
 export type Precision = "full" | "coarse";
+
+/** A part without regard to what it gives and of what: the key of its result. */
+interface PartKey {
+  readonly name: string;
+}
+
+type PartResult = ({ readonly value: unknown } | { readonly failure: unknown }) & {
+  /** The parts that it asked for itself, and those that these asked for. */
+  readonly stoodOn: ReadonlySet<PartKey>;
+};
 
 /**
  * Everything computed from one closed model, each part at most once.
@@ -18,8 +38,10 @@ export type Precision = "full" | "coarse";
 export class Evaluation<M> {
   readonly model: M;
   readonly precision: Precision;
-  private readonly results = new Map<Part<M, unknown>, { value: unknown } | { failure: unknown }>();
+  private readonly results = new Map<PartKey, PartResult>();
   private companion: Evaluation<M> | undefined;
+  /** What the work at hand has used so far; undefined while nobody listens. */
+  private used: Set<PartKey> | undefined;
 
   constructor(model: M, precision: Precision = "full") {
     this.model = model;
@@ -28,25 +50,47 @@ export class Evaluation<M> {
 
   /** The result of a part, computed at the first call. */
   once<T>(part: Part<M, T>): T {
-    const known = this.results.get(part);
-    if (known !== undefined) {
-      if ("failure" in known) throw known.failure;
-      return known.value as T;
+    const result = this.results.get(part) ?? this.compute(part);
+    if (this.used !== undefined && !this.used.has(part)) {
+      this.used.add(part);
+      for (const other of result.stoodOn) this.used.add(other);
     }
+    if ("failure" in result) throw result.failure;
+    return result.value as T;
+  }
+
+  private compute<T>(part: Part<M, T>): PartResult {
+    const outer = this.used;
+    const stoodOn = new Set<PartKey>();
+    this.used = stoodOn;
+    let result: PartResult;
     try {
-      const value = part.compute(this);
-      this.results.set(part, { value });
-      return value;
+      result = { value: part.compute(this), stoodOn };
     } catch (failure) {
-      this.results.set(part, { failure });
-      throw failure;
+      result = { failure, stoodOn };
+    } finally {
+      this.used = outer;
     }
+    this.results.set(part, result);
+    return result;
   }
 
   /** Puts a result in place of what a part would compute: for fits that vary what is otherwise fixed. Only before first use. */
   preset<T>(part: Part<M, T>, value: T): void {
     if (this.results.has(part)) throw new Error(`part "${part.name}" is computed already`);
-    this.results.set(part, { value });
+    this.results.set(part, { value, stoodOn: new Set() });
+  }
+
+  /** Does some work and tells which parts it used, directly or through other parts. */
+  watch<T>(work: () => T): { value: T; parts: readonly Part<M, unknown>[] } {
+    const outer = this.used;
+    const used = new Set<PartKey>();
+    this.used = used;
+    try {
+      return { value: work(), parts: [...used] as Part<M, unknown>[] };
+    } finally {
+      this.used = outer;
+    }
   }
 
   /** Names of the parts computed so far, in order of completion. */

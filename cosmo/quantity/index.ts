@@ -7,6 +7,7 @@ export {
   type Quantity,
   type QuantityArgument,
   type QuantityValue,
+  quantityNotes,
   redshiftArgument,
-  type ValidityNote,
 } from "./quantity";
+export type { ValidityNote } from "./validityNote";

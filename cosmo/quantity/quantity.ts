@@ -1,19 +1,13 @@
 import { DomainError } from "../errors";
 import type { SourceKey } from "../sources";
-import type { Evaluation } from "./evaluation";
+import type { Evaluation, Part } from "./evaluation";
+import type { ValidityNote } from "./validityNote";
 
 /** A value with the absolute numerical error of its computation. */
 export interface Computed {
   readonly value: number;
   /** Absolute, in the value's unit; not the uncertainty of the inputs. */
   readonly error: number;
-}
-
-/** A statement on where a number stops being valid, shown with the result. */
-export interface ValidityNote {
-  /** `warning`: the number should not be used as it stands without thought; `note`: good to know. */
-  readonly level: "note" | "warning";
-  readonly text: string;
 }
 
 /** An argument of a quantity: z, t, d. */
@@ -44,6 +38,8 @@ export interface Quantity<M> {
   readonly equation: string;
   /** How it is computed, in one sentence. */
   readonly method: string;
+  /** The same for a model that asks for another way than {@link method}; undefined where it does not. */
+  readonly methodFor?: (model: M) => string | undefined;
   /** Stated bound on the relative numerical error, enforced by tests. */
   readonly accuracy: number;
   readonly sources: readonly SourceKey[] | ((model: M) => readonly SourceKey[]);
@@ -158,9 +154,10 @@ export function evaluateQuantity<M>(
   place?: string,
 ): QuantityValue {
   checkArguments(definition, values, place);
-  const computed = finiteResult(definition, evaluation, values, place);
+  const { value: computed, parts } = evaluation.watch(() => finiteResult(definition, evaluation, values, place));
   let error = Math.abs(computed.error);
-  if (definition.usesHistory === true && evaluation.precision === "full") {
+  const approximate = parts.some((part) => part.approximate?.(evaluation.model) === true);
+  if ((definition.usesHistory === true || approximate) && evaluation.precision === "full") {
     error += Math.abs(computed.value - definition.compute(evaluation.coarse(), values).value);
   }
   const rounding = 4 * Number.EPSILON * Math.abs(computed.value);
@@ -171,8 +168,34 @@ export function evaluateQuantity<M>(
     arguments: [...values],
     value: computed.value,
     error: Math.max(error, rounding),
-    method: definition.method,
+    method: definition.methodFor?.(evaluation.model) ?? definition.method,
     sources: typeof definition.sources === "function" ? definition.sources(evaluation.model) : definition.sources,
-    notes: definition.notes?.(evaluation, values) ?? [],
+    notes: joinNotes(definition, evaluation, values, parts),
   };
+}
+
+/**
+ * The notes of a quantity by itself: its own, and those of the parts that its computation uses. For rows, where the value comes
+ * from {@link computeQuantity}.
+ */
+export function quantityNotes<M>(
+  definition: Quantity<M>,
+  evaluation: Evaluation<M>,
+  values: readonly number[] = [],
+): readonly ValidityNote[] {
+  const { parts } = evaluation.watch(() => definition.compute(evaluation, values));
+  return joinNotes(definition, evaluation, values, parts);
+}
+
+function joinNotes<M>(
+  definition: Quantity<M>,
+  evaluation: Evaluation<M>,
+  values: readonly number[],
+  parts: readonly Part<M, unknown>[],
+): readonly ValidityNote[] {
+  const all = [
+    ...(definition.notes?.(evaluation, values) ?? []),
+    ...parts.flatMap((part) => part.notes?.(evaluation) ?? []),
+  ];
+  return all.filter((note, i) => all.findIndex((other) => other.text === note.text) === i);
 }

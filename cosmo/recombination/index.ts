@@ -1,3 +1,4 @@
+export { baryonToPhotonRatio, baryonToPhotonRatioQuantity } from "./baryonToPhotonRatio";
 export { type Gas, gasPart, heliumToHydrogenRatio } from "./gas";
 export {
   atomSettings,
