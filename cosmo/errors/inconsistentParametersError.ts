@@ -5,8 +5,8 @@ export interface InconsistentParametersFields {
   where: string;
   /** The givens involved, by name. */
   parameters: readonly string[];
-  /** "missing", "redundant" or "contradictory". */
-  problem: "missing" | "redundant" | "contradictory";
+  /** "missing", "redundant", "contradictory" or "ambiguous". */
+  problem: "missing" | "redundant" | "contradictory" | "ambiguous";
   /** The sentence that says what is wrong. */
   reason: string;
   hint?: string | undefined;
@@ -16,7 +16,7 @@ export interface InconsistentParametersFields {
 export class InconsistentParametersError extends CosmologyError {
   override readonly name = "InconsistentParametersError";
   readonly parameters: readonly string[];
-  readonly problem: "missing" | "redundant" | "contradictory";
+  readonly problem: "missing" | "redundant" | "contradictory" | "ambiguous";
 
   constructor(fields: InconsistentParametersFields) {
     super(fields.where, `${fields.where}: ${fields.reason}`, fields.hint);

@@ -13,6 +13,17 @@ export interface ClosedNeutrinos {
   readonly masslessSpeciesDensity: number;
 }
 
+/** How a model was closed where fields alone did not do it. */
+export interface ModelSolution {
+  /** Parameters that were solved for, and the givens that determined them. */
+  readonly solvedFor: readonly string[];
+  readonly determinedBy: readonly string[];
+  /** Evaluations of the model at full precision that the search took. */
+  readonly evaluations: number;
+  /** Givens beyond what was needed, which follow from the others within their rounding. */
+  readonly agreeing: readonly string[];
+}
+
 /** A model with nothing left open: every density, fraction and convention a number or a word. */
 export interface ClosedModel {
   /** What it was closed from. */
@@ -51,4 +62,6 @@ export interface ClosedModel {
   readonly recombination: RecombinationTier;
   readonly conventions: Required<ConventionGivens>;
   readonly constants: ConstantsSet;
+  /** Present where a derived number stood in for a parameter, or where more was given than needed. */
+  readonly solution?: ModelSolution;
 }

@@ -37,13 +37,73 @@ export interface ConventionGivens {
 }
 
 /**
- * A cosmological model as a notebook states it: a sufficient set of densities or fractions with hubble, the rest by default.
+ * Derived numbers that may stand in place of a parameter they determine; units are the vocabulary's.
+ */
+export interface DerivedGivens {
+  /** Age today in Gyr. */
+  age?: number;
+  /** 100 theta_*, unit 0.01 rad. */
+  acousticAngle?: number;
+  /** l_A. */
+  acousticMultipole?: number;
+  /** R. */
+  shiftParameter?: number;
+  /** z_*. */
+  lastScatteringRedshift?: number;
+  /** r_* in Mpc. */
+  lastScatteringSoundHorizon?: number;
+  /** z_drag. */
+  dragRedshift?: number;
+  /** r_drag in Mpc. */
+  dragSoundHorizon?: number;
+  /** r_drag h in Mpc. */
+  dragSoundHorizonTimesReducedHubble?: number;
+  /** k_D in 1/Mpc. */
+  dampingWavenumber?: number;
+  /** 100 theta_D, unit 0.01 rad. */
+  dampingAngle?: number;
+  /** z_eq. */
+  equalityRedshift?: number;
+  /** k_eq in 1/Mpc. */
+  equalityWavenumber?: number;
+  /** 100 theta_eq, unit 0.01 rad. */
+  equalityHorizonAngle?: number;
+  /** 100 theta_s,eq, unit 0.01 rad. */
+  equalitySoundAngle?: number;
+  /** Redshift at which the expansion began to accelerate. */
+  accelerationRedshift?: number;
+  /** Omega_m h^3. */
+  matterFractionTimesCubedHubble?: number;
+  /** omega_nu of the massive neutrinos, in place of their masses. */
+  neutrinoDensity?: number;
+  /** Omega_nu of the massive neutrinos, in place of their masses. */
+  neutrinoFraction?: number;
+  /** omega_gamma, in place of photonTemperature. */
+  photonDensity?: number;
+  /** Omega_gamma, in place of photonTemperature. */
+  photonFraction?: number;
+  /** omega_r of photons and massless neutrinos, in place of neutrinos.effectiveNumber. */
+  radiationDensity?: number;
+  /** Omega_r of photons and massless neutrinos, in place of neutrinos.effectiveNumber. */
+  radiationFraction?: number;
+  /**
+   * Parameters to be solved for that have a default and would keep it otherwise: `["curvature"]` lets a derived number
+   * determine the curvature.
+   */
+  solveFor?: readonly string[];
+  /** Where two models meet the givens: the one nearest to these values is taken, `{ curvature: 0 }`. */
+  solveNear?: { readonly [parameter: string]: number };
+}
+
+/**
+ * A cosmological model as a notebook states it: a sufficient set of parameters, or of derived numbers in their place, the
+ * rest by default.
  *
  * Densities are omega = Omega h^2; fractions are Omega today. Matter includes massive neutrinos.
  *
  * @example const base: ModelGivens = { hubble: 67.4, baryonDensity: 0.0224, coldMatterDensity: 0.12 };
  */
-export interface ModelGivens {
+export interface ModelGivens extends DerivedGivens {
   /** H0 in km/s/Mpc. */
   hubble?: number;
   /** h = H0/(100 km/s/Mpc), in place of hubble. */

@@ -1,8 +1,9 @@
-export type { ClosedModel, ClosedNeutrinos } from "./closedModel";
+export type { ClosedModel, ClosedNeutrinos, ModelSolution } from "./closedModel";
 export { type ModelField, modelFieldByName, modelFields } from "./fields";
 export type {
   ConventionGivens,
   DarkEnergyGivens,
+  DerivedGivens,
   ModelGivens,
   NeutrinoGivens,
   NeutrinoOrdering,

@@ -13,8 +13,15 @@ const groups = new Set(
  *
  * Throws {@link UnknownNameError} for a field that is not in the vocabulary, with the name that was probably meant, and
  * {@link DomainError} for a value of the wrong kind or outside its rule. `undefined` counts as not given.
+ *
+ * @param derived names of derived quantities that may stand in for fields; any finite number is taken.
  */
-export function validateGivens(givens: unknown, where: string, place?: string): FlatGivens {
+export function validateGivens(
+  givens: unknown,
+  where: string,
+  place?: string,
+  derived: ReadonlySet<string> = new Set(),
+): FlatGivens {
   if (typeof givens !== "object" || givens === null || Array.isArray(givens)) {
     throw new DomainError({
       where,
@@ -34,8 +41,13 @@ export function validateGivens(givens: unknown, where: string, place?: string): 
       for (const [inner, innerValue] of Object.entries(value)) {
         if (innerValue !== undefined) take(flat, `${key}.${inner}`, innerValue, where, place);
       }
+    } else if (derived.has(key) && !modelFieldByName.has(key)) {
+      if (typeof value !== "number" || !Number.isFinite(value)) {
+        throw new DomainError({ where, argument: key, rule: "must be a finite number", value, place });
+      }
+      flat.set(key, value);
     } else {
-      take(flat, key, value, where, place);
+      take(flat, key, value, where, place, derived);
     }
   }
   return flat;
@@ -52,10 +64,11 @@ function take(
   value: unknown,
   where: string,
   place: string | undefined,
+  derived: ReadonlySet<string> = new Set(),
 ): void {
   const field = modelFieldByName.get(name);
   if (field === undefined || groups.has(name)) {
-    const known = modelFields.map((each) => each.name);
+    const known = [...modelFields.map((each) => each.name), ...derived];
     throw new UnknownNameError({ where, kind: "parameter", given: name, known, place });
   }
   flat.set(name, checkedValue(field, value, where, place));

@@ -12,6 +12,7 @@ export type { IntegrateOptions } from "./integrate";
 export { integrate } from "./integrate";
 export type { NumericalResult } from "./numericalResult";
 export { richardsonDerivative } from "./richardson";
+export { type SolveSystemOptions, type SystemSolution, solveSystem } from "./solveSystem";
 export type { StiffOptions, StiffSystem } from "./stiff";
 export { solveStiff } from "./stiff";
 export type { StiffSolution } from "./stiffSolution";

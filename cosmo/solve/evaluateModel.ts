@@ -3,7 +3,8 @@ import type { ClosedModel, ModelGivens } from "../model";
 import { findQuantity } from "../quantities";
 import { checkArguments, Evaluation, evaluateQuantity, type QuantityValue } from "../quantity";
 import { computeQuantity } from "../quantity/quantity";
-import { closeModel, type Origin } from "./closeModel";
+import { closeModel } from "./closeModel";
+import type { Origin } from "./origin";
 
 /** One closed model and every number that can be asked of it; each history, depth and horizon is computed once. */
 export class ModelNumbers {

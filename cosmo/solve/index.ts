@@ -1,2 +1,3 @@
-export { closeModel, type Origin } from "./closeModel";
+export { closeModel } from "./closeModel";
 export { evaluateModel, ModelNumbers } from "./evaluateModel";
+export type { Origin } from "./origin";

@@ -32,6 +32,7 @@ export function modelTable(model: ClosedModel, tiers: readonly string[] = [model
     ],
     rows,
     notes: [
+      ...solutionNotes(model),
       `conventions: constants ${model.conventions.constants}, closure ${model.conventions.closure}, equalityMatter ${model.conventions.equalityMatter}, recombination ${tiers.join(", ")}`,
     ],
   });
@@ -41,4 +42,17 @@ export function modelTable(model: ClosedModel, tiers: readonly string[] = [model
 function exact(value: number): string {
   const shortest = formatNumber(value, { digits: "all" });
   return shortest.length <= 11 ? shortest : formatNumber(value, { digits: 8 });
+}
+
+/** What was solved for, from what, and which givens agreed beyond need. */
+function solutionNotes({ solution }: ClosedModel): string[] {
+  if (solution === undefined) return [];
+  const notes: string[] = [];
+  if (solution.solvedFor.length > 0) {
+    notes.push(`${solution.solvedFor.join(" and ")} solved from ${solution.determinedBy.join(" and ")}`);
+  }
+  if (solution.agreeing.length > 0) {
+    notes.push(`given beyond need and in agreement within rounding: ${solution.agreeing.join(", ")}`);
+  }
+  return notes;
 }
