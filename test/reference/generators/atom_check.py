@@ -10,7 +10,7 @@ background densities and the Saha start, but neither the method, nor the unknown
 import math
 
 import numpy as np
-from scipy.integrate import solve_ivp
+from scipy.integrate import LSODA, solve_ivp
 
 import background as B
 import constants as K
@@ -18,6 +18,8 @@ import saha
 
 RTOL = 1e-13
 RADAU_RTOL = 1e-11
+HANDOVER = (1900.0, 1750.0, 1600.0, 1500.0, 1400.0)
+STEPS = 20000
 
 
 def right_hand_side(b, tier, correction):
@@ -111,6 +113,23 @@ def right_hand_side(b, tier, correction):
     return rhs, electrons, hubble
 
 
+def walk(rhs, jacobian, v1, state, wanted, atol):
+    """LSODA from v1 to 0, its own interpolant at the wanted v; None when it takes more than STEPS steps (1500 to 5000 are usual)."""
+    solver = LSODA(rhs, v1, state, 0.0, jac=jacobian, rtol=RTOL, atol=atol, max_step=0.02)
+    columns, done = [], 0
+    for _ in range(STEPS):
+        message = solver.step()
+        if solver.status == "failed":
+            raise RuntimeError(message)
+        last = len(wanted) if solver.status == "finished" else int(np.searchsorted(-wanted, -solver.t, side="right"))
+        if last > done:
+            columns.append(solver.dense_output()(wanted[done:last]))
+            done = last
+        if solver.status == "finished":
+            return np.concatenate(columns, axis=1)
+    return None
+
+
 def solve(givens, tier, correction, v_out):
     """x_e, T_m, x_p at the v = ln(1+z) asked for (falling), and H(z) in 1/s as a function of 1+z."""
     b = B.Background(givens, B.LOOSE)
@@ -132,18 +151,21 @@ def solve(givens, tier, correction, v_out):
         return np.array(columns).T
 
     # Radau through the stiffest part (hydrogen relaxes 1e14 times in a unit of v at z = 3500, where LSODA's first, explicit steps
-    # cannot begin), LSODA from z = 1900 on
+    # cannot begin), then LSODA; where its explicit start crawls instead of changing to BDF it begins lower down
     v_out = np.asarray(v_out)
-    v1 = math.log(1901.0)
-    early, late = v_out[v_out > v1], v_out[v_out <= v1]
-    first = solve_ivp(rhs, (v0, v1), start, method="Radau", jac=jacobian, t_eval=np.append(early, v1), rtol=RADAU_RTOL,
-                      atol=[max(1e-13, a) for a in atol])
-    if not first.success or first.y.shape[1] != len(early) + 1:
-        raise RuntimeError(first.message)
-    second = solve_ivp(rhs, (v1, 0.0), first.y[:, -1], method="LSODA", jac=jacobian, t_eval=late, rtol=RTOL, atol=atol, max_step=0.02)
-    if not second.success or second.y.shape[1] != len(late):
-        raise RuntimeError(second.message)
-    answer = np.concatenate((first.y[:, :-1], second.y), axis=1)
+    for handover in HANDOVER:
+        v1 = math.log1p(handover)
+        early, late = v_out[v_out > v1], v_out[v_out <= v1]
+        first = solve_ivp(rhs, (v0, v1), start, method="Radau", jac=jacobian, t_eval=np.append(early, v1), rtol=RADAU_RTOL,
+                          atol=[max(1e-13, a) for a in atol])
+        if not first.success or first.y.shape[1] != len(early) + 1:
+            raise RuntimeError(first.message)
+        second = walk(rhs, jacobian, v1, first.y[:, -1], late, atol)
+        if second is not None:
+            break
+    else:
+        raise RuntimeError("LSODA crawled from every start")
+    answer = np.concatenate((first.y[:, :-1], second), axis=1)
     x_p = answer[0]
     y = answer[2] if tier == "calibrated" else [None] * len(v_out)
     x_e = np.array([electrons(math.exp(v), p, q) for v, p, q in zip(v_out, x_p, y)])

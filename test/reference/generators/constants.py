@@ -2,7 +2,7 @@
 
 Decimal strings, so that every precision (float64, 80-bit long double, mpmath) reads the printed digits itself.
 CODATA sets: Mohr et al. 2012 (2010), 2016 (2014), Tiesinga et al. 2021 (2018), Mohr et al. 2024 (2022); sigma_SB as printed.
-Atomic levels: NIST Atomic Spectra Database, 1/cm.  Atomic masses: AME2020.
+c exact (SI); au, parsec: IAU 2012 B2 and 2015 B2.
 """
 
 SETS = {
@@ -32,10 +32,11 @@ C = "299792458"
 AU = "149597870700"
 JULIAN_YEAR = "31557600"
 
+# neutral atoms, u: AME2020 (memory)
 MASS_H_U = "1.00782503190"
 MASS_HE_U = "4.002603254"
 
-# 1/cm above the ground state
+# 1/cm above the ground state: NIST Atomic Spectra Database; He_2p and He_3P (memory)
 LEVEL = {
     "H_limit": "109678.77174307",
     "H_alpha": "82259.16304",
@@ -47,9 +48,12 @@ LEVEL = {
     "HeII_limit": "438908.8789",
 }
 
+# 1/s: hydrogen two-photon, Goldman 1989; helium two-photon, Drake, Victor & Dalgarno 1969; 2 1P1 and 2 3P1 to the ground (all memory)
 RATE = {"H_two_photon": "8.22458", "He_two_photon": "51.3", "He_singlet": "1.798287e9", "He_triplet": "177.58"}
+# hydrogen 1s photo-ionisation at the two helium lines, m2: Stobbe 1930, as the contract prints it (memory)
 SIGMA_1S = {"singlet": "1.8742e-22", "triplet": "1.9381e-22"}
 
+# T_cmb: Fixsen 2009; N_eff: Bennett et al. 2021; the rest are the vocabulary's defaults
 DEFAULTS = {
     "curvature": 0.0, "w0": -1.0, "wa": 0.0, "effectiveNumber": 3.044, "masses": [0.06, 0.0, 0.0],
     "photonTemperature": 2.7255, "helium": "nucleosynthesis", "constants": "codata2022", "closure": "radiationInside",

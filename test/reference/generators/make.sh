@@ -3,6 +3,8 @@
 # Lyman-alpha correction), `make.sh check` only the comparisons that write nothing.  Debian's python3-mpmath and python3-scipy.
 set -e
 cd "$(dirname "$0")"
+# one core: the linear algebra library's threads only wait for each other on matrices this small
+export OMP_NUM_THREADS=1 OPENBLAS_NUM_THREADS=1
 python=${REFERENCE_PYTHON:-/usr/bin/python3}
 case "${1:-all}" in
   all)
