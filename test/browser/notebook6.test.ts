@@ -18,6 +18,9 @@ interface CellState {
   outputs: { type: string; stream: string; media: string[] }[];
 }
 
+/** Milliseconds for a whole notebook on a machine that is busy with other things. */
+const patience = 300_000;
+
 describe.skipIf(withoutChromium() || missing(notebookProgram))("the demo notebooks in Notebook 6", () => {
   let server: NotebookServer;
   let browser: Browser;
@@ -29,7 +32,7 @@ describe.skipIf(withoutChromium() || missing(notebookProgram))("the demo noteboo
     browser = await launchChromium();
     page = await browser.newPage({ viewport: { width: 1100, height: 900 } });
     asked = await watchRequests(page);
-  });
+  }, patience);
   afterAll(async () => {
     await browser?.close();
     await server?.stop();
@@ -52,7 +55,7 @@ describe.skipIf(withoutChromium() || missing(notebookProgram))("the demo noteboo
         await page.click("#celllink");
         await page.click("#run_all_cells");
         await page.waitForFunction(`${cellStates}.every((cell) => /^[0-9]+$/.test(cell.prompt))`, undefined, {
-          timeout: 100_000,
+          timeout: 200_000,
         });
         await page.waitForFunction("!document.querySelector('.kernel_busy_icon')", undefined, { timeout: 30_000 });
         states = (await page.evaluate(cellStates)) as CellState[];
@@ -62,7 +65,7 @@ describe.skipIf(withoutChromium() || missing(notebookProgram))("the demo noteboo
         await page.setViewportSize({ width: 1100, height: Math.min(height + 300, 16_000) });
         await page.screenshot({ path: screenshot(`notebook6-${name.replace(".ipynb", "")}`) });
         await page.setViewportSize({ width: 1100, height: 900 });
-      });
+      }, patience);
       afterAll(async () => {
         await page.evaluate("Jupyter.notebook.save_notebook()");
         await page.evaluate("window.onbeforeunload = null");

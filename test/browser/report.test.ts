@@ -28,7 +28,7 @@ describe.skipIf(withoutChromium())("the report of the demo notebooks, opened wit
     page.on("console", (message) => complaints.push(message.text()));
     page.on("pageerror", (error) => complaints.push(error.message));
     await page.goto(pathToFileURL(file).href, { waitUntil: "load" });
-  });
+  }, 300_000);
   afterAll(async () => {
     await browser?.close();
   });

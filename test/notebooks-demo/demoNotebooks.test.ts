@@ -77,7 +77,7 @@ describe("the demo notebooks through the kernel", () => {
   };
   beforeAll(async () => {
     for (const name of demoNames) reports.set(name, await runDemo(name));
-  });
+  }, 300_000);
 
   for (const name of demoNames) {
     it(`${name} runs to its end without an error and comes out as valid nbformat 4.5`, () => {
