@@ -1,11 +1,12 @@
 import { hundredKmPerSecondPerMpc } from "../model";
 import { atomSettings } from "../recombination";
 import { lymanAlphaVolume } from "../recombination/hydrogenRates";
-import { type AtomTables, heliumStride } from "./atomTables";
+import type { AtomTables } from "./atomTables";
 import type { BatchRow } from "./batchRow";
+import { heliumInEquilibrium, marchHelium } from "./marchHelium";
 import { marchHydrogen } from "./marchHydrogen";
-import { marchWithHelium } from "./marchWithHelium";
-import { equilibriumPoints, gridBlocks, gridSize, gridTemperatures } from "./temperatureGrid";
+import { marchWithHelium, startHydrogen } from "./marchWithHelium";
+import { gridBlocks, gridSize, gridTemperatures } from "./temperatureGrid";
 
 /** The state of the three-level atom at every point of the grid, and what the march needs of the row and the tier. */
 export interface MarchState {
@@ -25,12 +26,12 @@ export interface MarchState {
 
 /**
  * The three-level atom down the grid by backward differentiation: a six-point prediction and one Newton step with the analytic
- * slope an equation.
+ * slope an equation. Helium first, on its coarse block, hydrogen being in Saha equilibrium there; then hydrogen.
  *
  * The equations are those of recombination/threeLevelAtom.ts in other variables: 1 - x_p, 1 - y and d = 1 - T_m/T_r, which keep their
  * digits at the stiff end; late, x_p is 2e-4 and 1 - (1 - x_p) still has twelve. Hydrogen's is multiplied through by Peebles'
- * denominator, the temperature's is linear in d. The march starts from points in Saha equilibrium, so that its stiff beginning asks for
- * no switch. A test holds its converged steps against the single model's derivative.
+ * denominator, the temperature's is linear in d. Both marches start from points in Saha equilibrium, so that the stiff beginning asks
+ * for no switch. A test holds converged steps against the single model's derivative.
  */
 export class AtomMarch implements MarchState {
   readonly neutral = new Float64Array(gridSize);
@@ -53,7 +54,9 @@ export class AtomMarch implements MarchState {
   /** @param inverseRate 100 km/s/Mpc over H on the grid. */
   run(row: BatchRow, inverseRate: Float64Array): void {
     if (this.escapeTemperature !== row.photonTemperature) this.fillEscapes(row.photonTemperature);
-    this.start(row, inverseRate);
+    if (this.tables.kineticHelium && row.heliumRatio > 0) marchHelium(this, row, inverseRate);
+    else heliumInEquilibrium(this, row);
+    startHydrogen(this, row, inverseRate);
     marchWithHelium(this, row, inverseRate);
     for (let b = 0; b < gridBlocks.length; b++) marchHydrogen(this, b, row, inverseRate);
   }
@@ -65,30 +68,5 @@ export class AtomMarch implements MarchState {
       this.escapes[i] = (t ** 3 * lymanAlphaVolume * correction(t / temperature)) / hundredKmPerSecondPerMpc;
     }
     this.escapeTemperature = temperature;
-  }
-
-  /** Equilibrium at the first points. */
-  private start(row: BatchRow, inverseRate: Float64Array): void {
-    const { tables, neutral, cooling, ionized, neutralHelium } = this;
-    const ratio = row.heliumRatio;
-    for (let i = 0; i < equilibriumPoints; i++) {
-      const x = gridTemperatures[i] / row.photonTemperature;
-      const n = row.hydrogenDensity * x * x * x;
-      const s = tables.helium[i * heliumStride + 2] / n;
-      const hydrogen = tables.hydrogenSaha[i] / n;
-      let electrons = 1 + ratio;
-      let neutralShare = 0;
-      for (let k = 0; k < 4; k++) {
-        neutralShare = electrons / (hydrogen + electrons);
-        const b = 1 - neutralShare + s;
-        electrons = 1 - neutralShare + (ratio * 2 * s) / (b + Math.sqrt(b * b + 4 * ratio * s));
-      }
-      neutral[i] = neutralShare;
-      // y (x_e + s) = s.
-      neutralHelium[i] = electrons / (electrons + s);
-      ionized[i] = electrons;
-      const heating = (this.compton[i] * inverseRate[i] * electrons) / (1 + ratio + electrons);
-      cooling[i] = 1 / (1 + heating);
-    }
   }
 }

@@ -7,13 +7,13 @@ import {
   groundIonizationOverRecombination,
 } from "../recombination/hydrogenRates";
 import { electronStates, levelTemperature, sahaLogarithms } from "../recombination/sahaFactors";
-import { gridSize, gridStep, gridTemperatures, gridTop, heliumEnd } from "./temperatureGrid";
+import { gridSize, gridTemperatures, heliumEnd } from "./temperatureGrid";
 
 /** Numbers a point in {@link AtomTables.hydrogen}: alpha T_r^3, beta, beta e^(-L_a/kT), each with two Taylor coefficients in d; T_r^3. */
-export const hydrogenStride = 10;
+export const hydrogenColumns = 10;
 
 /** Numbers a point in {@link AtomTables.helium}; see {@link heliumRow}. */
-export const heliumStride = 11;
+export const heliumColumns = 11;
 
 /** Every rate of the three-level atom that depends on T_r alone, tabulated from the functions of the single model. */
 export interface AtomTables {
@@ -24,17 +24,17 @@ export interface AtomTables {
   readonly hydrogen: Float64Array;
   /** Helium's rates, down to {@link heliumEnd}. */
   readonly helium: Float64Array;
-  /** F alpha, m3/s, at equal steps in ln T_m from {@link coldTop} down: for gas far colder than the radiation. */
+  /** F alpha, m3/s, at equal steps in sqrt(T_m/K), {@link coldPointsPerRoot} a unit: for gas far colder than the radiation. */
   readonly coldRecombination: Float64Array;
   /** n_e n_p/n_1s of Saha equilibrium, 1/m3, at every point where helium counts. */
   readonly hydrogenSaha: Float64Array;
 }
 
-/** Temperature at the top of {@link AtomTables.coldRecombination}, ln K: the grid's. */
-export const coldTop = gridTop;
+/** Points a unit of sqrt(T_m/K): linear interpolation errs by 1e-6 at 100 K. */
+export const coldPointsPerRoot = 50;
 
-/** Down to 0.5 K: T_m of a gas that has not seen the radiation since z = 150. */
-const coldPoints = Math.ceil((coldTop - Math.log(0.5)) / gridStep);
+/** As far as 3600 K; the gas parts from the radiation below 2000 K. */
+const coldPoints = 60 * coldPointsPerRoot;
 
 /** Step of the differences that give the Taylor coefficients: their error is below 1e-8 for the steepest exponential. */
 const difference = 2e-4;
@@ -94,8 +94,8 @@ export function atomTables(tier: "peebles" | "calibrated", constants: ConstantsS
   const found = known.get(key);
   if (found !== undefined) return found;
   const factor = atomSettings(tier).recombinationFactor;
-  const hydrogen = new Float64Array(gridSize * hydrogenStride);
-  const helium = new Float64Array(heliumEnd * heliumStride);
+  const hydrogen = new Float64Array(gridSize * hydrogenColumns);
+  const helium = new Float64Array(heliumEnd * heliumColumns);
   const hydrogenSaha = new Float64Array(heliumEnd);
   const alpha = (temperature: number) => factor * caseBRecombination(temperature);
   const beta = (temperature: number) => alpha(temperature) * excitedIonizationOverRecombination(temperature, constants);
@@ -103,18 +103,19 @@ export function atomTables(tier: "peebles" | "calibrated", constants: ConstantsS
     alpha(temperature) * groundIonizationOverRecombination(temperature, constants);
   for (let i = 0; i < gridSize; i++) {
     const temperature = gridTemperatures[i];
-    writeSeries(hydrogen, i * hydrogenStride, alpha, temperature);
-    hydrogen[i * hydrogenStride] *= temperature ** 3;
-    hydrogen[i * hydrogenStride + 9] = temperature ** 3;
-    writeSeries(hydrogen, i * hydrogenStride + 3, beta, temperature);
-    writeSeries(hydrogen, i * hydrogenStride + 6, ground, temperature);
+    writeSeries(hydrogen, i * hydrogenColumns, alpha, temperature);
+    hydrogen[i * hydrogenColumns] *= temperature ** 3;
+    hydrogen[i * hydrogenColumns + 9] = temperature ** 3;
+    writeSeries(hydrogen, i * hydrogenColumns + 3, beta, temperature);
+    writeSeries(hydrogen, i * hydrogenColumns + 6, ground, temperature);
     if (i < heliumEnd) {
-      heliumRow(helium, i * heliumStride, temperature, constants);
+      heliumRow(helium, i * heliumColumns, temperature, constants);
       hydrogenSaha[i] = Math.exp(sahaLogarithms(temperature, constants).hydrogen);
     }
   }
-  const coldRecombination = Float64Array.from({ length: coldPoints }, (_, i) =>
-    alpha(Math.exp(coldTop - gridStep * i)),
+  // Below 0.25 K, which no gas of the validated range comes to, the table stays level.
+  const coldRecombination = Float64Array.from({ length: coldPoints + 1 }, (_, i) =>
+    alpha(Math.max(i / coldPointsPerRoot, 0.5) ** 2),
   );
   const built: AtomTables = {
     tier,

@@ -6,10 +6,14 @@ import type { BatchRow } from "./batchRow";
 import type { Crossing } from "./gridDepths";
 import { edgeWeights, partialCell } from "./gridQuadrature";
 import { squaredTermAt } from "./rowExpansion";
-import { gridSize, gridStep, gridTemperatures } from "./temperatureGrid";
+import { gridSize, gridStep, gridTemperatures, heliumAtMainTop, heliumBlock, mainFirst } from "./temperatureGrid";
 
-/** The point up to which the grid serves; the two above it are the last rule's. */
+/** The point up to which the coarse block serves; the two above it are the last rule's. */
 const topPoint = 2;
+
+/** The joint between the coarse block and the fine one: a point of each, two of the rule beyond on either side. */
+const coarseJoint = heliumAtMainTop + 1;
+const fineJoint = mainFirst + heliumBlock.stride;
 
 /** T_r, K, between which He++ takes its second electron; the pieces of the integral above the grid end there. */
 const pieceEnds = [gridTemperatures[topPoint], 5000 * 2.7255, 6500 * 2.7255];
@@ -74,24 +78,39 @@ export class GridDamping {
   run(row: BatchRow, inverseRate: Float64Array, ionized: Float64Array, from: Crossing): number {
     const { integrand, cell } = this;
     const start = from.lower - 1;
+    this.fill(row, inverseRate, ionized, 0, coarseJoint + 3);
+    this.fill(row, inverseRate, ionized, mainFirst, start + 4);
+    for (let j = 0; j < 6; j++) cell[j] = integrand[start + 3 - j];
+    const onGrid =
+      gridStep *
+      (partialCell(cell, 0, from.part) +
+        this.sum(fineJoint, start) +
+        heliumBlock.stride * this.sum(topPoint, coarseJoint));
+    const total = (onGrid + this.above(row)) / row.scattering;
+    return 1 / (unitHubbleDistance * Math.sqrt(total / 6));
+  }
+
+  private fill(row: BatchRow, inverseRate: Float64Array, ionized: Float64Array, first: number, end: number): void {
+    const { integrand } = this;
     const scale = 1 / row.photonTemperature;
     const loading = row.loading;
-    for (let i = 0; i <= start + 3; i++) {
+    for (let i = first; i < end; i++) {
       const x = gridTemperatures[i] * scale;
       const sum = x + loading;
       integrand[i] = ((loading * loading + (16 / 15) * x * sum) * inverseRate[i]) / (sum * sum * x * ionized[i]);
     }
-    for (let j = 0; j < 6; j++) cell[j] = integrand[start + 3 - j];
+  }
+
+  /** The integral between two points of one block over its step, both ends with their two points beyond. */
+  private sum(upper: number, lower: number): number {
+    const { integrand } = this;
     let sum = 0;
-    for (let i = topPoint; i <= start; i++) sum += integrand[i];
+    for (let i = upper; i <= lower; i++) sum += integrand[i];
     for (let j = 0; j < 6; j++) {
-      const inside = j < 2 ? 0 : 1;
-      const correction = edgeWeights[j] / 1440 - inside;
-      sum += correction * (integrand[start + 2 - j] + integrand[topPoint - 2 + j]);
+      const correction = edgeWeights[j] / 1440 - (j < 2 ? 0 : 1);
+      sum += correction * (integrand[lower + 2 - j] + integrand[upper - 2 + j]);
     }
-    const onGrid = gridStep * (sum + partialCell(cell, 0, from.part));
-    const total = (onGrid + this.above(row)) / row.scattering;
-    return 1 / (unitHubbleDistance * Math.sqrt(total / 6));
+    return sum;
   }
 
   private above(row: BatchRow): number {

@@ -1,6 +1,6 @@
 import type { BatchRow } from "./batchRow";
 import { addNeutrinoEnergy } from "./neutrinoTable";
-import { gridBlocks, gridSize, gridStep, gridTemperatures } from "./temperatureGrid";
+import { gridBlocks, gridSize, gridStep, gridTemperatures, heliumBlock, mainFirst } from "./temperatureGrid";
 
 /** One over the expansion rate on the grid, with what makes up the rate kept for as long as rows share it. */
 export class GridExpansion {
@@ -37,14 +37,19 @@ export class GridExpansion {
     // f = a^-p e^(-3 wa (1 - a)): the power by one factor a step, the exponential of the small 3 wa a by its series.
     const power = 3 * (1 + row.w0 + row.wa);
     const tilt = 3 * row.wa;
-    const first = gridTemperatures[0] * scale;
-    let grown = darkEnergy * Math.exp(power * Math.log(first) - tilt);
-    let factor = Math.exp(-power * gridStep);
-    for (let b = 0; b < gridBlocks.length; b++) {
-      const { first: start, end } = gridBlocks[b];
-      if (b > 0) factor *= factor;
-      for (let i = start; i < end; i++) {
-        if (i > 0) grown *= factor;
+    const fineFactor = Math.exp(-power * gridStep);
+    let factor = Math.exp(-power * gridStep * heliumBlock.stride);
+    let grown = 0;
+    for (let b = -1; b < gridBlocks.length; b++) {
+      const { first, end } = b < 0 ? heliumBlock : gridBlocks[b];
+      if (b === 0) factor = fineFactor;
+      else if (b > 0) factor *= factor;
+      for (let i = first; i < end; i++) {
+        if (i === heliumBlock.first || i === mainFirst) {
+          grown = darkEnergy * Math.exp(power * Math.log(gridTemperatures[i] * scale) - tilt);
+        } else {
+          grown *= factor;
+        }
         const x = gridTemperatures[i] * scale;
         const s = tilt / x;
         const total =

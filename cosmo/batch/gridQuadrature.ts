@@ -46,14 +46,14 @@ lagrangeCoefficients(stencilStart).forEach((coefficients, j) => {
 export function tailWeights(upTo: number): Float64Array {
   const weights = new Float64Array(gridSize);
   gridBlocks.forEach((block, b) => {
-    addBlock(weights, block, b === 0 ? upTo : block.first - 1);
+    if (b === 0) addBlock(weights, block, upTo, block.first);
+    else addBlock(weights, block, block.first - 1, block.first - 1);
   });
   return weights;
 }
 
-/** Cells of one block, from its last point up to point `top`, which for all but the first block is the last one of the block before. */
-function addBlock(weights: Float64Array, { first, end, stride }: GridBlock, top: number): void {
-  const highest = first === 0 ? 0 : top;
+/** Cells of one block, from its last point up to point `top`, by points no higher than `highest`. */
+function addBlock(weights: Float64Array, { end, stride }: GridBlock, top: number, highest: number): void {
   for (let lower = end - 1; lower > top; lower--) {
     // Places count downward in index: place 0 is the cell's upper point, lower - 1.
     const start = Math.min(Math.max(lower - 1 + stencilStart, highest), end - stencil);

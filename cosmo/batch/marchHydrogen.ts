@@ -1,10 +1,10 @@
 import { atoms } from "../constants";
 import { hundredKmPerSecondPerMpc } from "../model";
 import type { MarchState } from "./atomMarch";
-import { hydrogenStride } from "./atomTables";
+import { coldPointsPerRoot, hydrogenColumns } from "./atomTables";
 import { pastWeights, predictionWeights, slopeWeight } from "./backwardDifferences";
 import type { BatchRow } from "./batchRow";
-import { gridBlocks, gridPlaces, gridStep, heliumEnd } from "./temperatureGrid";
+import { gridBlocks, gridStep, gridTemperatures, heliumEnd } from "./temperatureGrid";
 
 /** 1 - T_m/T_r up to which the Taylor series of the case-B coefficient serves: its third term is below 1e-8 of it. */
 const seriesLimit = 3e-3;
@@ -14,13 +14,19 @@ const seriesLimit = 3e-3;
  */
 export function marchHydrogen(state: MarchState, b: number, row: BatchRow, inverseRate: Float64Array): void {
   const { tables, neutral, cooling, ionized, escapes, compton, newtonSteps } = state;
-  const { hydrogen: rates, coldRecombination } = tables;
+  const { hydrogen: rates, coldRecombination: cold } = tables;
+  const temperatures = gridTemperatures;
+  const coldPerRoot = coldPointsPerRoot;
   const c1 = pastWeights[0];
   const c2 = pastWeights[1];
   const c3 = pastWeights[2];
   const c4 = pastWeights[3];
   const c5 = pastWeights[4];
   const c6 = pastWeights[5];
+  const t1 = 48 / 25;
+  const t2 = -36 / 25;
+  const t3 = 16 / 25;
+  const t4 = -3 / 25;
   const p1 = predictionWeights[0];
   const p2 = predictionWeights[1];
   const p3 = predictionWeights[2];
@@ -32,9 +38,9 @@ export function marchHydrogen(state: MarchState, b: number, row: BatchRow, inver
   const density = row.hydrogenDensity / row.photonTemperature ** 3;
   const others = 1 + row.heliumRatio;
   const step = stride * gridStep * slopeWeight;
+  const thermalStep = (step * 12) / 25 / slopeWeight;
   const weight = step / hundredKmPerSecondPerMpc;
   const twoPhoton = atoms.hydrogenTwoPhotonRate;
-  const perStep = 1 / gridStep;
   // At a block's beginning the points of the finer block stand in, every second of them.
   const back = b === 0 ? 1 : 2;
   const last = start - 1;
@@ -49,31 +55,24 @@ export function marchHydrogen(state: MarchState, b: number, row: BatchRow, inver
   let d3 = cooling[last - 2 * back];
   let d4 = cooling[last - 3 * back];
   let d5 = cooling[last - 4 * back];
-  let d6 = cooling[last - 5 * back];
-  /** Place of T_r in the table of the cold coefficient, which begins at the grid's top. */
-  let place = gridPlaces[start];
   for (let i = start; i < end; i++) {
     const inverse = inverseRate[i];
     const span = weight * inverse;
-    const at = i * hydrogenStride;
+    const at = i * hydrogenColumns;
     const pastX = c1 * x1 + (c2 * x2 + c3 * x3 + (c4 * x4 + c5 * x5 + c6 * x6));
     let x = p1 * x1 + (p2 * x2 + p3 * x3 + (p4 * x4 + p5 * x5 + p6 * x6));
-    const pastD = c1 * d1 + (c2 * d2 + c3 * d3 + (c4 * d4 + c5 * d5 + c6 * d6));
-    const predictedD = p1 * d1 + (p2 * d2 + p3 * d3 + (p4 * d4 + p5 * d5 + p6 * d6));
+    const pastD = t1 * d1 + (t2 * d2 + (t3 * d3 + t4 * d4));
+    const predictedD = 5 * (d1 - d4) + (10 * (d3 - d2) + d5);
 
     let recombination = density * rates[at];
     if (predictedD < seriesLimit) {
       recombination *= 1 + predictedD * (rates[at + 1] + predictedD * rates[at + 2]);
     } else {
-      // Far colder than the radiation: the coefficient at T_m itself, from its own table in ln T.
-      const cold = place - Math.log(1 - predictedD) * perStep;
-      const k = cold | 0;
-      recombination =
-        density *
-        rates[at + 9] *
-        (coldRecombination[k] + (cold - k) * (coldRecombination[k + 1] - coldRecombination[k]));
+      // Far colder than the radiation: the coefficient at T_m itself, from its own table in sqrt(T_m).
+      const place = Math.sqrt(temperatures[i] * (1 - predictedD)) * coldPerRoot;
+      const k = place | 0;
+      recombination = density * rates[at + 9] * (cold[k] + (place - k) * (cold[k + 1] - cold[k]));
     }
-    place += stride;
     const ionization = rates[at + 3] * (1 + predictedD * (rates[at + 4] + predictedD * rates[at + 5]));
     const ground = rates[at + 6] * (1 + predictedD * (rates[at + 7] + predictedD * rates[at + 8]));
     const stuck = density * escapes[i] * inverse;
@@ -90,14 +89,13 @@ export function marchHydrogen(state: MarchState, b: number, row: BatchRow, inver
     }
     const electrons = 1 - x;
     const particles = others + electrons;
-    const d = ((pastD + step) * particles) / (particles * (1 + step) + step * inverse * compton[i] * electrons);
+    const d = ((pastD + thermalStep) * particles) / (particles * (1 + thermalStep) + thermalStep * inverse * compton[i] * electrons);
     x6 = x5;
     x5 = x4;
     x4 = x3;
     x3 = x2;
     x2 = x1;
     x1 = x;
-    d6 = d5;
     d5 = d4;
     d4 = d3;
     d3 = d2;

@@ -1,5 +1,5 @@
 import { fermiDiracEnergy } from "../expansion";
-import { gridPlaces, gridSize, gridStep, gridTop } from "./temperatureGrid";
+import { gridPlaces, gridSize, gridStep, mainTop } from "./temperatureGrid";
 
 // Below the range the energy is that of a massless species to 1e-15; above it lies every mass that the engine takes.
 const lowest = -17;
@@ -48,7 +48,7 @@ export function addNeutrinoEnergy(
   sum: Float64Array,
 ): void {
   const energy = table();
-  const place = (logMassRatioToday + logTemperatureToday - gridTop - lowest) / gridStep;
+  const place = (logMassRatioToday + logTemperatureToday - mainTop - lowest) / gridStep;
   const index = Math.floor(place);
   const p = place - index;
   const q = 1 - p;
