@@ -1,10 +1,11 @@
 import { DomainError, describeValue, UnknownNameError } from "../../../cosmo/errors";
-import { modelFieldByName, modelFields, validateGivens } from "../../../cosmo/model";
+import { modelFieldByName, validateGivens } from "../../../cosmo/model";
 import { CommandError } from "../commandError";
+import { findGiven, givenNames } from "./givenNames";
 import { type FlatValues, nestGivens, valueOfText } from "./givensOfRow";
 import { splitPairs } from "./pairs";
 
-/** What --set and --recombination give, by the field's name. */
+/** What --set and --recombination give, by the name in the vocabulary. */
 export type FillValues = FlatValues;
 
 /**
@@ -18,15 +19,8 @@ export function parseFill(lists: readonly string[], recombination: string | unde
   const values = new Map<string, number | string | readonly number[]>();
   const where = "derive --set";
   for (const { name, value } of pairs) {
-    const field = modelFieldByName.get(name);
-    if (field === undefined) {
-      throw new UnknownNameError({
-        where,
-        kind: "parameter",
-        given: name,
-        known: modelFields.map((each) => each.name),
-      });
-    }
+    const given = findGiven(name);
+    if (given === undefined) throw new UnknownNameError({ where, kind: "parameter", given: name, known: givenNames });
     if (values.has(name)) {
       const both = recombination !== undefined && name === "recombination";
       throw new CommandError(
@@ -35,10 +29,11 @@ export function parseFill(lists: readonly string[], recombination: string | unde
           : `derive: --set gives ${describeValue(name)} twice`,
       );
     }
-    const parsed = valueOfText(field, value);
+    const parsed = valueOfText(given, value);
     if ("reason" in parsed) throw new DomainError({ where, argument: name, rule: parsed.reason, value });
     values.set(name, parsed.value);
   }
-  validateGivens(nestGivens(values), where);
+  // A derived number has no rule beyond being finite until the model is solved for it.
+  validateGivens(nestGivens(new Map([...values].filter(([name]) => modelFieldByName.has(name)))), where);
   return values;
 }

@@ -1,18 +1,19 @@
-import type { ModelField, ModelGivens } from "../../../cosmo/model";
+import type { ModelGivens } from "../../../cosmo/model";
 import { type CellValue, parseNumber } from "../../data";
+import type { Given } from "./givenNames";
 
-/** Values of fields by their flat names. */
+/** Values of givens by their flat names. */
 export type FlatValues = ReadonlyMap<string, number | string | readonly number[]>;
 
-/** A field's value, or the clause that says why the cell holds none. */
+/** A given's value, or the clause that says why the cell holds none. */
 export type FieldValue = { readonly value: number | string | readonly number[] } | { readonly reason: string };
 
-/** The value of a field as text writes it: a number, a list such as 0.06;0, or a word. */
-export function valueOfText(field: ModelField, text: string): FieldValue {
+/** The value of a given as text writes it: a number, a list such as 0.06;0, or a word. */
+export function valueOfText(given: Given, text: string): FieldValue {
   const trimmed = text.trim();
-  if (field.kind === "choice") return { value: trimmed };
-  if (field.kind === "numberOrChoice" && /^[a-z]{4,}$/i.test(trimmed)) return { value: trimmed };
-  if (field.kind !== "numberList") return parseNumber(trimmed);
+  if (given.kind === "choice") return { value: trimmed };
+  if (given.kind === "numberOrChoice" && /^[a-z]{4,}$/i.test(trimmed)) return { value: trimmed };
+  if (given.kind !== "numberList") return parseNumber(trimmed);
   const numbers: number[] = [];
   for (const piece of trimmed.split(";")) {
     const parsed = parseNumber(piece);
@@ -22,20 +23,21 @@ export function valueOfText(field: ModelField, text: string): FieldValue {
   return { value: numbers };
 }
 
-/** The value of a field as a typed cell holds it: in JSON text is no number. */
-export function valueOfCell(field: ModelField, cell: Exclude<CellValue, null | undefined>, typed: boolean): FieldValue {
+/** The value of a given as a typed cell holds it: in JSON text is no number. */
+export function valueOfCell(given: Given, cell: Exclude<CellValue, null | undefined>, typed: boolean): FieldValue {
   if (typeof cell === "string") {
-    if (typed && field.kind === "number") return { reason: "must be a number" };
-    return valueOfText(field, cell);
+    const parsed = valueOfText(given, cell);
+    const word = "value" in parsed && typeof parsed.value === "string";
+    return typed && !word && given.kind !== "numberList" ? { reason: "must be a number" } : parsed;
   }
   if (typeof cell === "number") return finite(cell);
-  if (Array.isArray(cell) && field.kind === "numberList") {
+  if (Array.isArray(cell) && given.kind === "numberList") {
     if (!cell.every((each) => typeof each === "number")) return { reason: "must be a list of numbers" };
     const outside = cell.map(finite).find((each) => "reason" in each);
     return outside ?? { value: cell as number[] };
   }
-  if (field.kind === "numberList") return { reason: "must be a list of numbers" };
-  return { reason: field.kind === "choice" ? field.rule : "must be a number" };
+  if (given.kind === "numberList") return { reason: "must be a list of numbers" };
+  return { reason: given.kind === "choice" ? (given.field?.rule ?? "must be a word") : "must be a number" };
 }
 
 // JSON.parse makes 1e400 infinite.

@@ -1,7 +1,8 @@
 import { parseArgs } from "node:util";
-import { describeValue, nearestName } from "../../../cosmo/errors";
+import { DomainError, describeValue, nearestName, UnknownNameError } from "../../../cosmo/errors";
+import { modelFieldByName } from "../../../cosmo/model";
 import { parseRequests, type QuantityRequest } from "../../../cosmo/quantities";
-import { formatByName, formatOfFile, knownFormats, type TableFormat } from "../../data";
+import { formatByName, formatOfFile, knownFormats, parseNumber, type TableFormat } from "../../data";
 import { CommandError } from "../commandError";
 import { type FillValues, parseFill } from "./fill";
 import { splitPairs } from "./pairs";
@@ -18,6 +19,12 @@ export interface DeriveOptions {
   /** What the file calls a field, to the field's name. */
   readonly renamed: ReadonlyMap<string, string>;
   readonly fill: FillValues;
+  /** Columns of derived numbers that are part of the model, by the names in the file. */
+  readonly given: readonly string[];
+  /** Parameters that are solved for instead of keeping their defaults. */
+  readonly solveFor: readonly string[];
+  /** Which of two solutions is wanted: the one nearest to these values. */
+  readonly solveNear: ReadonlyMap<string, number>;
   readonly digits: number;
   readonly errors: boolean;
   readonly keepBadRows: boolean;
@@ -36,6 +43,9 @@ const options = {
   map: textOption,
   set: textOption,
   recombination: textOption,
+  given: textOption,
+  "solve-for": textOption,
+  "solve-near": textOption,
   digits: textOption,
   errors: flagOption,
   "bad-rows": textOption,
@@ -45,7 +55,7 @@ const options = {
   progress: flagOption,
 } as const;
 
-const repeatable = new Set(["add", "map", "set"]);
+const repeatable = new Set(["add", "map", "set", "given", "solve-for", "solve-near"]);
 
 /**
  * Reads the command line and checks all of it that can be checked without the file.
@@ -85,6 +95,9 @@ export function parseOptions(args: readonly string[]): DeriveOptions {
     requests,
     renamed: parseRenaming(texts.get("map") ?? []),
     fill: parseFill(texts.get("set") ?? [], one("recombination")),
+    given: namesOf(texts.get("given")),
+    solveFor: parameterNames(namesOf(texts.get("solve-for")), "solve-for"),
+    solveNear: parseNear(texts.get("solve-near") ?? []),
     digits: digitsOption(one("digits")),
     errors: flags.has("errors"),
     keepBadRows: oneOf("bad-rows", one("bad-rows") ?? "refuse", ["refuse", "keep"]) === "keep",
@@ -156,6 +169,37 @@ function digitsOption(text: string | undefined): number {
 function oneOf(option: string, value: string, choices: readonly string[]): string {
   if (choices.includes(value)) return value;
   throw new CommandError(`derive: --${option} must be ${choices.join(" or ")}, got ${describeValue(value)}`);
+}
+
+function namesOf(lists: readonly string[] = []): string[] {
+  return lists
+    .flatMap((list) => list.split(","))
+    .map((name) => name.trim())
+    .filter((name) => name !== "");
+}
+
+function parameterNames(names: readonly string[], option: string): readonly string[] {
+  const stranger = names.find((name) => !modelFieldByName.has(name));
+  if (stranger === undefined) return names;
+  const known = [...modelFieldByName.keys()];
+  throw new UnknownNameError({ where: `derive --${option}`, kind: "parameter", given: stranger, known });
+}
+
+function parseNear(lists: readonly string[]): Map<string, number> {
+  const near = new Map<string, number>();
+  const pairs = splitPairs(lists, "solve-near", "curvature=0");
+  parameterNames(
+    pairs.map((pair) => pair.name),
+    "solve-near",
+  );
+  for (const { name, value } of pairs) {
+    const parsed = parseNumber(value);
+    if ("reason" in parsed) {
+      throw new DomainError({ where: "derive --solve-near", argument: name, rule: parsed.reason, value });
+    }
+    near.set(name, parsed.value);
+  }
+  return near;
 }
 
 function parseRenaming(lists: readonly string[]): Map<string, string> {

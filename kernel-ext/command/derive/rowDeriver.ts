@@ -1,11 +1,12 @@
 import { CosmologyError, DataRowError } from "../../../cosmo/errors";
-import { type ModelGivens, modelFieldByName, modelFields } from "../../../cosmo/model";
+import { type ModelGivens, modelFields } from "../../../cosmo/model";
 import { findQuantity } from "../../../cosmo/quantities";
 import { Evaluation, evaluateQuantity, type ValidityNote } from "../../../cosmo/quantity";
 import { computeQuantity } from "../../../cosmo/quantity/quantity";
 import { closeModel } from "../../../cosmo/solve";
 import { type CellValue, roundDigits, type TableRow } from "../../data";
 import type { ColumnPlan } from "./columns";
+import { findGiven, type Given } from "./givenNames";
 import { nestGivens, valueOfCell } from "./givensOfRow";
 import type { DeriveOptions } from "./options";
 import { rowFault } from "./rowFault";
@@ -33,7 +34,7 @@ export class RowDeriver {
       values: request.arguments,
       definition: findQuantity(request.name, where),
     }));
-    this.columnOfField = new Map(plan.fields.map(({ field, column }) => [field.name, column]));
+    this.columnOfField = new Map(plan.givens.map(({ given, column }) => [given.name, column]));
   }
 
   /**
@@ -72,10 +73,10 @@ export class RowDeriver {
   /** The row's model cells as numbers and lists, for output that knows them; others as they are. */
   typedCells(row: TableRow): CellValue[] {
     const cells = [...row.cells];
-    for (const { index, field } of this.plan.fields) {
+    for (const { index, given } of this.plan.givens) {
       const cell = cells[index];
       if (typeof cell !== "string") continue;
-      const parsed = valueOfCell(field, cell, false);
+      const parsed = valueOfCell(given, cell, false);
       if ("value" in parsed) cells[index] = parsed.value;
     }
     return cells;
@@ -88,13 +89,13 @@ export class RowDeriver {
   private givens(row: TableRow): ModelGivens {
     const typed = this.options.inputFormat === "jsonl";
     const values = new Map(this.options.fill);
-    const given = new Set<string>();
-    const take = (name: string, column: string, cell: CellValue): void => {
+    const seen = new Set<string>();
+    const take = (given: Given, column: string, cell: CellValue): void => {
+      const { name } = given;
       if (cell === undefined) return;
       const refuse = (reason: string, value?: CellValue, hint?: string): never => {
         throw new DataRowError({ where: this.where, row: row.number, column, value, reason, hint });
       };
-      const field = modelFieldByName.get(name)!;
       if (cell === null) {
         if (values.has(name)) return;
         refuse(
@@ -103,28 +104,32 @@ export class RowDeriver {
           `fill it with --set ${name}=VALUE, or leave the column out`,
         );
       } else {
-        const parsed = valueOfCell(field, cell, typed);
+        const parsed = valueOfCell(given, cell, typed);
         if ("reason" in parsed) refuse(parsed.reason, cell);
         else {
-          if (given.has(name)) refuse(`gives ${name} a second time`, cell);
-          given.add(name);
+          if (seen.has(name)) refuse(`gives ${name} a second time`, cell);
+          seen.add(name);
           values.set(name, parsed.value);
         }
       }
     };
-    for (const { index, column, field } of this.plan.fields) take(field.name, column, row.cells[index]);
+    for (const { index, column, given } of this.plan.givens) take(given, column, row.cells[index]);
     for (const { index, column } of this.plan.groups) {
       for (const [name, cell] of groupCells(row.cells[index])) {
-        if (name === undefined || !modelFieldByName.has(`${column}.${name}`)) {
+        const given = name === undefined ? undefined : findGiven(`${column}.${name}`);
+        if (given === undefined) {
           const inner = modelFields.map((field) => field.name).filter((each) => each.startsWith(`${column}.`));
           const reason = `must be an object with fields of ${inner.map((each) => each.slice(column.length + 1)).join(", ")}`;
           const value = name === undefined ? cell : name;
           throw new DataRowError({ where: this.where, row: row.number, column, value, reason });
         }
-        take(`${column}.${name}`, `${column}.${name}`, cell);
+        take(given, given.name, cell);
       }
     }
-    return nestGivens(values);
+    const givens = nestGivens(values);
+    if (this.options.solveFor.length > 0) givens.solveFor = this.options.solveFor;
+    if (this.options.solveNear.size > 0) givens.solveNear = Object.fromEntries(this.options.solveNear);
+    return givens;
   }
 }
 

@@ -12,6 +12,11 @@ others are carried through untouched. FILE ends in .csv, .tsv or .jsonl; - is st
                         their own names in the output
   --set LIST            fills what the file lacks, a whole column or single empty cells:
                         "neutrinos.effectiveNumber=3.046, conventions.closure=radiationOnTop"
+  --given LIST          columns of derived numbers that are part of the model: "acousticAngle" in place
+                        of hubble. Without it they stand in where exactly as many parameters are missing,
+                        and are carried through where none is
+  --solve-for LIST      parameters that a derived number determines instead of their defaults: "curvature"
+  --solve-near LIST     where two models meet the givens, the nearest to these values: "curvature=0"
   --recombination TIER  calibrated (default), peebles or saha; the same as --set recombination=TIER
   --digits N            significant digits of the added columns, 1 to 17; default 15
   --errors              adds a column NAME.error behind each: the absolute numerical error estimate

@@ -142,10 +142,59 @@ describe("derive", () => {
     );
   });
 
-  it("says that a column of a derived quantity is not used for the model", async () => {
+  it("carries a derived number through where nothing is missing, and says so", async () => {
     const run = await runDerive(["-", "--add", "reducedHubble"], csv.replace("label", "age"));
     expect(run.code).toBe(0);
-    expect(run.stderr).toContain('column "age" is a derived quantity, and is carried through, not used for the model');
+    expect(run.stdout.split("\n")[1]).toBe("000,67.4,0.0224,0.12,0.674");
+    expect(run.stderr).toContain(
+      'column "age" is a derived number, and is carried through, not used for the model; --given makes it part of it',
+    );
+  });
+
+  it("solves for what is missing from a derived number that stands in for it", async () => {
+    const densities = { baryonDensity: 0.0224, coldMatterDensity: 0.12 };
+    const text = "acousticAngle,baryonDensity,coldMatterDensity\n1.0411,0.0224,0.12\n";
+    const hubble = digits15(evaluateModel({ ...densities, acousticAngle: 1.0411 }).value("hubble"));
+    const run = await runDerive(["-", "--add", "hubble"], text);
+    expect(run.stdout.split("\n")[1]).toBe(`1.0411,0.0224,0.12,${hubble}`);
+    expect(run.stderr).toBe(
+      'cosmology-cells derive standard input: no column gives hubble or reducedHubble; solved for from "acousticAngle"\n',
+    );
+    // Back again: the model with that hubble has that angle.
+    const back = evaluateModel({ ...densities, hubble: Number(hubble) });
+    // Measured 1.4e-13.
+    expect(Math.abs(back.value("acousticAngle") / 1.0411 - 1)).toBeLessThan(1.5e-12);
+    const renamed = await runDerive(
+      ["-", "--add", "hubble", "--map", "theta=acousticAngle"],
+      text.replace("acousticAngle", "theta"),
+    );
+    expect(renamed).toEqual({ code: 0, stdout: run.stdout.replace("acousticAngle", "theta"), stderr: "" });
+  });
+
+  it("--given and --solve-for choose among derived numbers and what they determine", async () => {
+    const text = "acousticAngle,baryonDensity,coldMatterDensity,age\n1.0411,0.0224,0.12,13.79\n";
+    const add = ["-", "--add", "hubble, curvature"];
+    const givens = { acousticAngle: 1.0411, baryonDensity: 0.0224, coldMatterDensity: 0.12 };
+    const undecided = await runDerive(add, text);
+    expect(undecided.code).toBe(2);
+    expect(undecided.stderr).toContain(
+      'derive: no column gives hubble or reducedHubble; say with --given which of "acousticAngle", "age" stands in',
+    );
+    for (const [more, model] of [
+      [["--given", "acousticAngle"], givens],
+      [
+        ["--given", "acousticAngle,age", "--solve-for", "curvature"],
+        { ...givens, age: 13.79, solveFor: ["curvature"] },
+      ],
+    ] as const) {
+      const run = await runDerive([...add, ...more], text);
+      const numbers = evaluateModel(model);
+      expect(run.code).toBe(0);
+      expect(run.stdout.split("\n")[1]!.split(",").slice(4)).toEqual([
+        digits15(numbers.value("hubble")),
+        digits15(numbers.value("curvature")),
+      ]);
+    }
   });
 
   it("--errors adds the error that evaluateModel gives, to three digits", async () => {

@@ -130,9 +130,20 @@ const brokenFiles: Broken[] = [
       "row 1: the cold matter is not given\n  give one of coldMatterDensity, coldMatterFraction, matterDensity, matterFraction",
   },
   {
-    name: "too many givens",
-    text: `${head},reducedHubble\n${good},0.674\n`,
-    message: "row 1: hubble and reducedHubble state the same thing twice\n  leave one of them out",
+    name: "givens that contradict each other",
+    text: `${head},reducedHubble\n${good},0.7\n`,
+    message:
+      "row 1: hubble, reducedHubble contradict each other: from hubble 67.4 follows reducedHubble 0.67400000, given 0.7",
+  },
+  {
+    name: "a derived number that no model has",
+    text: "acousticAngle,baryonDensity,coldMatterDensity\n50,0.0224,0.12\n",
+    message: "row 1: no model was found with acousticAngle 50",
+  },
+  {
+    name: "text in the column of a derived number",
+    text: "age,baryonDensity,coldMatterDensity\nold,0.0224,0.12\n",
+    message: `row 1 of column "age": ${number}, got "old"`,
   },
   {
     name: "matter that is less than its baryons",
@@ -412,6 +423,22 @@ const wrongCommands: Wrong[] = [
     name: "a set twice",
     args: ["-", "--add", "age", "--set", "helium=0.24,helium=0.25"],
     message: 'derive: --set gives "helium" twice',
+  },
+  {
+    name: "a given column that is not there",
+    args: ["-", "--add", "age", "--given", "acousticAngle"],
+    message:
+      'derive: --given names the column "acousticAngle", which the file does not have; it has "hubble", "baryonDensity", "coldMatterDensity"',
+  },
+  {
+    name: "a parameter to be solved for that is none",
+    args: ["-", "--add", "age", "--solve-for", "curvatur"],
+    message: 'derive --solve-for: "curvatur" is not a known parameter\n  did you mean "curvature"?',
+  },
+  {
+    name: "a solution near what is no number",
+    args: ["-", "--add", "age", "--solve-near", "curvature=flat"],
+    message: `derive --solve-near: curvature ${number}, got "flat"`,
   },
   {
     name: "an unknown tier",
