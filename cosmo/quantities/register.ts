@@ -56,6 +56,23 @@ import {
   redshiftAtTemperatureQuantity,
 } from "../expansion";
 import {
+  ageCarrollQuantity,
+  dragRedshiftEisensteinHuQuantity,
+  dragSoundHorizonAubourgQuantity,
+  dragSoundHorizonAubourgWithNeutrinosQuantity,
+  dragSoundHorizonBriedenQuantity,
+  dragSoundHorizonEisensteinHuQuantity,
+  dragSoundHorizonEisensteinHuShortQuantity,
+  equalityRedshiftEisensteinHuQuantity,
+  equalityWavenumberEisensteinHuQuantity,
+  lastScatteringRedshiftHuSugiyamaQuantity,
+  luminosityDistancePenQuantity,
+  neutrinoDensityKomatsuQuantity,
+  opticalDepthJonesWyseQuantity,
+  silkWavenumberEisensteinHuQuantity,
+  visibilityJonesWyseQuantity,
+} from "../fits";
+import {
   baryonLoadingQuantity,
   dragDepthQuantity,
   dragRedshiftQuantity,
@@ -167,6 +184,21 @@ const quantities: readonly ModelQuantity[] = [
   backgroundBrightnessQuantity,
   blackbodyChromaticityXQuantity,
   blackbodyChromaticityYQuantity,
+  lastScatteringRedshiftHuSugiyamaQuantity,
+  dragRedshiftEisensteinHuQuantity,
+  dragSoundHorizonEisensteinHuQuantity,
+  dragSoundHorizonEisensteinHuShortQuantity,
+  dragSoundHorizonAubourgQuantity,
+  dragSoundHorizonAubourgWithNeutrinosQuantity,
+  dragSoundHorizonBriedenQuantity,
+  equalityRedshiftEisensteinHuQuantity,
+  equalityWavenumberEisensteinHuQuantity,
+  silkWavenumberEisensteinHuQuantity,
+  ageCarrollQuantity,
+  luminosityDistancePenQuantity,
+  neutrinoDensityKomatsuQuantity,
+  opticalDepthJonesWyseQuantity,
+  visibilityJonesWyseQuantity,
 ];
 
 /** The register: quantities by name. */
