@@ -1,5 +1,16 @@
 import type { ConstantsSet } from "../constants";
+import type { DarkEnergyEquation, DarkEnergyTable } from "./darkEnergyFunction";
 import type { ConventionGivens, ModelGivens, RecombinationTier } from "./givens";
+
+/** Dark energy of a closed model. */
+export interface ClosedDarkEnergy {
+  /** w today. */
+  readonly w0: number;
+  /** wa of w0 + wa (1 - a); 0 where w follows an equation or a table. */
+  readonly wa: number;
+  readonly equation?: DarkEnergyEquation;
+  readonly table?: DarkEnergyTable;
+}
 
 /** Neutrinos of a closed model. */
 export interface ClosedNeutrinos {
@@ -50,7 +61,7 @@ export interface ClosedModel {
   readonly darkEnergyFraction: number;
   /** Omega_k. */
   readonly curvature: number;
-  readonly darkEnergy: { readonly w0: number; readonly wa: number };
+  readonly darkEnergy: ClosedDarkEnergy;
   readonly neutrinos: ClosedNeutrinos;
   /** K. */
   readonly photonTemperature: number;
@@ -60,6 +71,8 @@ export interface ClosedModel {
   readonly reionizationRedshift: number | undefined;
   readonly reionizationDepth: number | undefined;
   readonly recombination: RecombinationTier;
+  /** n_s, which only the peak fits read. */
+  readonly scalarSpectralIndex: number;
   readonly conventions: Required<ConventionGivens>;
   readonly constants: ConstantsSet;
   /** Present where a derived number stood in for a parameter, or where more was given than needed. */

@@ -5,7 +5,7 @@ export interface ModelField {
   readonly symbol: string;
   /** "" for a pure number. */
   readonly unit: string;
-  readonly kind: "number" | "numberList" | "choice" | "numberOrChoice";
+  readonly kind: "number" | "numberList" | "choice" | "numberOrChoice" | "equation" | "table";
   /** The rule for numbers, as an error says it. */
   readonly rule: string;
   readonly accepts: (value: number) => boolean;
@@ -66,6 +66,24 @@ export const modelFields: readonly ModelField[] = [
   numberField("darkEnergyFraction", "Ω_DE", "", "finite", "Dark energy today"),
   numberField("darkEnergy.w0", "w_0", "", "finite", "Equation of state today", "-1"),
   numberField("darkEnergy.wa", "w_a", "", "finite", "Change of the equation of state with 1 - a", "0"),
+  {
+    name: "darkEnergy.equation",
+    symbol: "w",
+    unit: "",
+    kind: "equation",
+    rule: "must be a formula in z or in a, such as -1 + 0.1 z/(1 + z)",
+    accepts: () => false,
+    description: "Equation of state as a formula, in place of w_0 and w_a",
+  },
+  {
+    name: "darkEnergy.table",
+    symbol: "w",
+    unit: "",
+    kind: "table",
+    rule: "must be an object with lists redshifts and values",
+    accepts: () => false,
+    description: "Equation of state as a table over redshift, in place of w_0 and w_a",
+  },
   numberField("neutrinos.effectiveNumber", "N_eff", "", "notNegative", "Effective number of neutrino species", "3.044"),
   {
     name: "neutrinos.masses",
@@ -98,6 +116,7 @@ export const modelFields: readonly ModelField[] = [
   numberField("reionizationRedshift", "z_re", "", "positive", "Middle of the reionization of hydrogen"),
   numberField("reionizationDepth", "τ", "", "positive", "Optical depth of reionization"),
   choiceField("recombination", ["calibrated", "peebles", "saha"], "How recombination is computed"),
+  numberField("scalarSpectralIndex", "n_s", "", "finite", "Spectral index, for the peak fits only", "0.965"),
   choiceField(
     "conventions.constants",
     ["codata2022", "codata2018", "codata2014", "codata2010"],
@@ -109,6 +128,13 @@ export const modelFields: readonly ModelField[] = [
     "Whether radiation counts when the densities are closed to one",
   ),
   choiceField("conventions.equalityMatter", ["baryonsAndCold", "allMatter"], "The matter that defines equality"),
+  choiceField("conventions.lastScattering", ["full", "huSugiyama1996"], "How z_* is found"),
+  choiceField("conventions.drag", ["full", "eisensteinHu1998"], "How z_drag is found"),
+  choiceField(
+    "conventions.soundHorizon",
+    ["full", "eisensteinHu1998", "aubourg2015", "brieden2023"],
+    "How sound horizons are found",
+  ),
 ];
 
 /** A field by its flat name. */

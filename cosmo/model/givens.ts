@@ -1,11 +1,16 @@
 import type { ConstantsSetName } from "../constants";
+import type { DarkEnergyEquation, DarkEnergyTable } from "./darkEnergyFunction";
 
-/** Dark energy with w(a) = w0 + wa (1 - a) (Chevallier & Polarski 2001; Linder 2003). */
+/** Dark energy with w(a) = w0 + wa (1 - a) (Chevallier & Polarski 2001; Linder 2003), or with any w by a formula or a table. */
 export interface DarkEnergyGivens {
   /** w0, the equation of state today; -1 by default. */
   w0?: number;
   /** wa, its change with 1 - a; 0 by default. */
   wa?: number;
+  /** w as a formula in z or in a, in place of w0 and wa. Cells and `derive` take its text: "-1 + 0.1 z/(1 + z)". */
+  equation?: string | DarkEnergyEquation;
+  /** w at redshifts, in place of w0 and wa; interpolated in a, held at its end values beyond them. */
+  table?: DarkEnergyTable;
 }
 
 /** How a sum of neutrino masses is shared among the three. */
@@ -34,6 +39,27 @@ export interface ConventionGivens {
   closure?: "radiationInside" | "radiationOnTop";
   /** Which matter defines equality: `baryonsAndCold` (default, as in the Planck tables) or `allMatter`, massive neutrinos included. */
   equalityMatter?: "baryonsAndCold" | "allMatter";
+  /** How z_* is found: where the optical depth is one (`full`, default), or by the fit of Hu & Sugiyama 1996. */
+  lastScattering?: "full" | "huSugiyama1996";
+  /** How z_drag is found: where the drag depth is one (`full`, default), or by the fit of Eisenstein & Hu 1998. */
+  drag?: "full" | "eisensteinHu1998";
+  /**
+   * How sound horizons are found: by the integral (`full`, default); by the closed form of Eisenstein & Hu 1998 at every redshift; or
+   * r_drag alone by the fits of Aubourg et al. 2015 (eq. 16) or Brieden, Gil-Marin & Verde 2023, which need no z_drag.
+   */
+  soundHorizon?: "full" | "eisensteinHu1998" | "aubourg2015" | "brieden2023";
+}
+
+/** Errors of the givens, carried to every number of the model. */
+export interface UncertaintyGivens {
+  /** 68% errors by the given's flat name ("hubble", "darkEnergy.w0"): one number, or upper and lower apart, not signed. */
+  errors?: { readonly [given: string]: number | { readonly upper: number; readonly lower: number } };
+  /** A covariance matrix of several givens, in their units; these must not stand in `errors` too. */
+  covariance?: { readonly parameters: readonly string[]; readonly matrix: readonly (readonly number[])[] };
+  /** `linear` (default): with the matrix of derivatives. `sampling`: over quasi-random models, for what is not linear. */
+  method?: "linear" | "sampling";
+  /** Number of models of `sampling`; 256 by default. */
+  samples?: number;
 }
 
 /**
@@ -93,6 +119,8 @@ export interface DerivedGivens {
   solveFor?: readonly string[];
   /** Where two models meet the givens: the one nearest to these values is taken, `{ curvature: 0 }`. */
   solveNear?: { readonly [parameter: string]: number };
+  /** Errors of the givens; every number then comes with its uncertainty. */
+  uncertainty?: UncertaintyGivens;
 }
 
 /**
@@ -138,5 +166,7 @@ export interface ModelGivens extends DerivedGivens {
   reionizationDepth?: number;
   /** How recombination is computed; `calibrated` by default. */
   recombination?: RecombinationTier;
+  /** n_s, for the fits of the acoustic peaks only; 0.965 by default. */
+  scalarSpectralIndex?: number;
   conventions?: ConventionGivens;
 }

@@ -1,4 +1,5 @@
-export type { ClosedModel, ClosedNeutrinos, ModelSolution } from "./closedModel";
+export type { ClosedDarkEnergy, ClosedModel, ClosedNeutrinos, ModelSolution } from "./closedModel";
+export { checkEquation, checkTable, type DarkEnergyEquation, type DarkEnergyTable } from "./darkEnergyFunction";
 export { type ModelField, modelFieldByName, modelFields } from "./fields";
 export type {
   ConventionGivens,
@@ -8,6 +9,7 @@ export type {
   NeutrinoGivens,
   NeutrinoOrdering,
   RecombinationTier,
+  UncertaintyGivens,
 } from "./givens";
 export { neutrinoMassesFromSum } from "./neutrinoMasses";
 export { hundredKmPerSecondPerMpc, photonDensity, unitDensity } from "./photonDensity";

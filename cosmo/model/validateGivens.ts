@@ -1,7 +1,11 @@
 import { DomainError, UnknownNameError } from "../errors";
+import { checkEquation, checkTable } from "./darkEnergyFunction";
 import { type ModelField, modelFieldByName, modelFields } from "./fields";
 
-/** A given in flat form: the field's dotted name and what came. */
+/**
+ * A given in flat form: the field's dotted name and what came. An equation of state stands there by its text, a table by its number
+ * of entries: the objects themselves are in the givens.
+ */
 export type FlatGivens = ReadonlyMap<string, number | string | readonly number[]>;
 
 const groups = new Set(
@@ -83,6 +87,8 @@ function checkedValue(
   const refuse = (rule: string): never => {
     throw new DomainError({ where, argument: field.name, rule, value, place });
   };
+  if (field.kind === "equation") return checkEquation(value, where, place).text;
+  if (field.kind === "table") return `${checkTable(value, where, place).redshifts.length} entries`;
   if (field.kind === "numberList") {
     if (!Array.isArray(value) || value.length > 3) return refuse(field.rule);
     if (!value.every((each) => typeof each === "number" && field.accepts(each))) return refuse(field.rule);

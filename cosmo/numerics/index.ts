@@ -10,6 +10,7 @@ export type { QuadratureRule } from "./gaussLegendre";
 export { gaussLegendre } from "./gaussLegendre";
 export type { IntegrateOptions } from "./integrate";
 export { integrate } from "./integrate";
+export { mirroredDigits } from "./mirroredDigits";
 export type { NumericalResult } from "./numericalResult";
 export { richardsonDerivative } from "./richardson";
 export { type SolveSystemOptions, type SystemSolution, solveSystem } from "./solveSystem";

@@ -2,6 +2,7 @@ export { Evaluation, type Part, type Precision } from "./evaluation";
 export {
   type Computed,
   checkArguments,
+  computeQuantity,
   evaluateQuantity,
   pastRedshiftArgument,
   type Quantity,
@@ -9,5 +10,6 @@ export {
   type QuantityValue,
   quantityNotes,
   redshiftArgument,
+  type Uncertainty,
 } from "./quantity";
 export type { ValidityNote } from "./validityNote";

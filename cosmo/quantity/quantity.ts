@@ -52,6 +52,15 @@ export interface Quantity<M> {
   readonly compute: (evaluation: Evaluation<M>, values: readonly number[]) => Computed;
 }
 
+/** The 68% uncertainty that a number has from uncertain givens. */
+export interface Uncertainty {
+  /** Above the value, in its unit. */
+  readonly upper: number;
+  /** Below the value, not signed. */
+  readonly lower: number;
+  readonly method: "linear" | "sampling";
+}
+
 /** A number that can say where it came from. */
 export interface QuantityValue {
   readonly name: string;
@@ -61,6 +70,8 @@ export interface QuantityValue {
   readonly value: number;
   /** Absolute numerical error estimate. */
   readonly error: number;
+  /** What the errors of the givens make of it, where they were stated. */
+  readonly uncertainty?: Uncertainty;
   readonly method: string;
   readonly sources: readonly SourceKey[];
   readonly notes: readonly ValidityNote[];

@@ -37,6 +37,9 @@ export function closeDirect(flat: FlatGivens, givens: ModelGivens, origin: Origi
     constants: pick.word("conventions.constants", "codata2022") as ConstantsSetName,
     closure: pick.word("conventions.closure", "radiationInside") as "radiationInside" | "radiationOnTop",
     equalityMatter: pick.word("conventions.equalityMatter", "baryonsAndCold") as "baryonsAndCold" | "allMatter",
+    lastScattering: pick.word("conventions.lastScattering", "full") as "full" | "huSugiyama1996",
+    drag: pick.word("conventions.drag", "full") as "full" | "eisensteinHu1998",
+    soundHorizon: pick.word("conventions.soundHorizon", "full") as Required<ConventionGivens>["soundHorizon"],
   };
   const constants = constantsSets[conventions.constants];
   const photonTemperature = pick.number("photonTemperature", 2.7255);
@@ -118,6 +121,7 @@ export function closeDirect(flat: FlatGivens, givens: ModelGivens, origin: Origi
     reionizationRedshift: pick.optionalNumber("reionizationRedshift"),
     reionizationDepth: pick.optionalNumber("reionizationDepth"),
     recombination: pick.word("recombination", "calibrated") as RecombinationTier,
+    scalarSpectralIndex: pick.number("scalarSpectralIndex", 0.965),
     conventions,
     constants,
   };

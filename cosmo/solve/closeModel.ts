@@ -40,7 +40,7 @@ function splitSearch(givens: unknown, where: string) {
   if (typeof givens !== "object" || givens === null || Array.isArray(givens)) {
     return { solveFor: [] as string[], solveNear: {}, fields: givens };
   }
-  const { solveFor = [], solveNear = {}, ...fields } = givens as ModelGivens;
+  const { solveFor = [], solveNear = {}, uncertainty: _, ...fields } = givens as ModelGivens;
   if (!Array.isArray(solveFor) || !solveFor.every((name) => typeof name === "string")) {
     throw new DomainError({ where, argument: "solveFor", rule: "must be a list of parameter names", value: solveFor });
   }

@@ -1,3 +1,4 @@
+import { mirroredDigits } from "../numerics";
 import type { Slot } from "./slots";
 
 /** First primes: the bases of Halton's sequence. */
@@ -19,7 +20,7 @@ export function scatteredStarts(
       Float64Array.from(unknowns, (slot, i) => {
         const [low, high] = slot.range.map((edge) => searched(slot, edge)) as [number, number];
         const middle = center[i]!;
-        const share = radicalInverse(k, bases[i % bases.length]!);
+        const share = mirroredDigits(k, bases[i % bases.length]!);
         // The inner half of each side: the edges of the ranges are for the search to run to, not to start from.
         return share < 0.5 ? middle - (0.5 - share) * (middle - low) : middle + (share - 0.5) * (high - middle);
       }),
@@ -30,15 +31,4 @@ export function scatteredStarts(
 
 function searched(slot: Slot, value: number): number {
   return slot.logarithmic ? Math.log(value) : value;
-}
-
-/** Digits of k in a base, mirrored about the point. */
-function radicalInverse(k: number, base: number): number {
-  let value = 0;
-  let fraction = 1 / base;
-  for (let rest = k; rest > 0; rest = Math.floor(rest / base)) {
-    value += (rest % base) * fraction;
-    fraction /= base;
-  }
-  return value;
 }

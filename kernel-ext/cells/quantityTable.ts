@@ -8,14 +8,17 @@ const shownDigits = 8;
 /**
  * A table of named numbers: quantity, symbol, value, unit, numerical error.
  *
- * Values stand at eight significant digits, fewer where the numerical error reaches further.
+ * Values stand at eight significant digits, fewer where the numerical error reaches further; with a column of uncertainties where
+ * the model states errors of its givens.
  */
 export function quantityTable(title: string, values: readonly QuantityValue[], notes: readonly string[] = []): Table {
+  const uncertain = values.some((each) => each.uncertainty !== undefined);
   const rows: TableRow[] = values.map((each) => ({
     quantity: describe(each),
     symbol: each.symbol,
     value: roundedToError(each),
     unit: each.unit,
+    uncertainty: uncertaintyText(each),
     error: each.error,
   }));
   return table({
@@ -24,12 +27,23 @@ export function quantityTable(title: string, values: readonly QuantityValue[], n
       { key: "quantity", label: "quantity" },
       { key: "symbol", label: "symbol", symbols: true },
       { key: "value", label: "value", digits: shownDigits },
+      ...(uncertain ? [{ key: "uncertainty", label: "uncertainty (68%)" }] : []),
       { key: "unit", label: "unit", symbols: true },
       { key: "error", label: "numerical error", digits: 1 },
     ],
     rows,
     notes,
   });
+}
+
+/** What the errors of the givens make of the number, two digits each side. */
+function uncertaintyText({ uncertainty }: QuantityValue): string {
+  if (uncertainty === undefined) return "";
+  const [upper, lower] = [
+    formatNumber(uncertainty.upper, { digits: 2 }),
+    formatNumber(uncertainty.lower, { digits: 2 }),
+  ];
+  return upper === lower ? `± ${upper}` : `+${upper} −${lower}`;
 }
 
 function describe(each: QuantityValue): string {
