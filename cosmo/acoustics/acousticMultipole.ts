@@ -1,11 +1,11 @@
 import type { ModelEvaluation } from "../expansion";
-import { historyQuantity } from "../lastScattering";
+import { historyQuantity, throughLastScattering } from "../lastScattering";
 import { acousticAngle } from "./acousticAngle";
 
 /**
  * l_A = pi/theta_*: the multipole spacing of the acoustic scale.
  *
- * Accuracy 1e-7. Source: Bond, Efstathiou & Tegmark 1997.
+ * Accuracy 1e-10. Source: Bond, Efstathiou & Tegmark 1997.
  * @example acousticMultipole(evaluation) // 301.8
  */
 export function acousticMultipole(evaluation: ModelEvaluation): number {
@@ -19,7 +19,9 @@ export const acousticMultipoleQuantity = historyQuantity({
   description: "Multipole of the acoustic scale",
   equation: String.raw`l_A = \pi/\theta_*`,
   method: "closed form of theta_*",
-  accuracy: 1e-7,
+  steps: ["lastScattering", "soundHorizon"],
+  needsHistory: throughLastScattering,
+  accuracy: 1e-10,
   sources: ["bond1997"],
   compute: acousticMultipole,
 });

@@ -6,7 +6,7 @@ import { dampingWavenumber } from "./dampingWavenumber";
 /**
  * 100 theta_D: angle of the damping scale in units of 0.01 rad, theta_D = pi/[k_D D_M(z_*)].
  *
- * Accuracy 1e-7. Source: Planck 2018 VI, table 2.
+ * Accuracy 5e-10. Source: Planck 2018 VI, table 2.
  * @example dampingAngle(evaluation) // 0.1608
  */
 export function dampingAngle(evaluation: ModelEvaluation): number {
@@ -20,7 +20,8 @@ export const dampingAngleQuantity = historyQuantity({
   description: "Angle of the damping scale, times 100",
   equation: String.raw`\theta_D = \frac{\pi}{k_D\,D_M(z_*)}`,
   method: "closed form of k_D and D_M(z_*)",
-  accuracy: 1e-7,
+  steps: ["lastScattering"],
+  accuracy: 5e-10,
   sources: ["planck2018Parameters"],
   compute: dampingAngle,
 });

@@ -52,8 +52,10 @@ const dampingPart: ModelPart<number> = {
  *
  * k_D^-2 = (1/6) int_0^eta(z_*) d eta/(a n_e sigma_T) [R^2 + 16 (1+R)/15]/(1+R)^2, with He++ in Saha equilibrium early.
  *
+ * The history is the full one under every convention; z_* is the one in force.
+ *
  * Method: Gauss-Legendre nodes on the steps of the ionization history from z_* up, adaptive Gauss-Kronrod above it, split where
- * He++ recombines. Accuracy 1e-7.
+ * He++ recombines. Accuracy 5e-10.
  * Source: Kaiser 1983; Zaldarriaga & Harari 1995.
  * @example dampingWavenumber(evaluation) // 0.1409
  */
@@ -68,7 +70,8 @@ export const dampingWavenumberQuantity = historyQuantity({
   description: "Wavenumber of photon diffusion at last scattering",
   equation: String.raw`k_D^{-2} = \frac16 \int_0^{\eta_*} \frac{d\eta}{a\,n_e \sigma_T}\,\frac{R^2 + \frac{16}{15}(1+R)}{(1+R)^2}`,
   method: "quadrature on the steps of the ionization history, Saha equilibrium above",
-  accuracy: 1e-7,
+  steps: ["lastScattering"],
+  accuracy: 5e-10,
   sources: ["kaiser1983", "zaldarriagaHarari1995"],
   compute: dampingWavenumber,
 });

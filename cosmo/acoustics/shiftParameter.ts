@@ -1,12 +1,12 @@
 import { unitHubbleDistance } from "../distances";
 import type { ModelEvaluation } from "../expansion";
-import { historyQuantity } from "../lastScattering";
+import { historyQuantity, throughLastScattering } from "../lastScattering";
 import { lastScatteringDistancePart } from "./acousticAngle";
 
 /**
  * Shift parameter R = sqrt(Omega_m) (H0/c) D_M(z_*), Omega_m with massive neutrinos.
  *
- * Accuracy 1e-7. Source: Bond, Efstathiou & Tegmark 1997.
+ * Accuracy 2e-12. Source: Bond, Efstathiou & Tegmark 1997.
  * @example shiftParameter(evaluation) // 1.75
  */
 export function shiftParameter(evaluation: ModelEvaluation): number {
@@ -21,7 +21,9 @@ export const shiftParameterQuantity = historyQuantity({
   description: "Shift parameter of the distance to last scattering",
   equation: String.raw`\mathcal{R} = \sqrt{\Omega_m}\,\frac{H_0}{c}\,D_M(z_*)`,
   method: "closed form of D_M(z_*)",
-  accuracy: 1e-7,
+  steps: ["lastScattering"],
+  needsHistory: throughLastScattering,
+  accuracy: 2e-12,
   sources: ["bond1997"],
   compute: shiftParameter,
 });

@@ -22,7 +22,7 @@ export const dragDepthQuantity = historyQuantity({
   description: "Drag depth to a redshift",
   equation: String.raw`\tau_d(z) = \int_0^z \frac{c\,\sigma_T n_e\,dz'}{R\,H\,(1+z')}`,
   method: "Gauss-Legendre quadrature on the steps of the ionization history",
-  accuracy: 1e-7,
+  accuracy: 2e-9,
   sources: ["huSugiyama1996", "eisensteinHu1998"],
   compute: (evaluation, [z]) => dragDepth(evaluation, z!),
 });

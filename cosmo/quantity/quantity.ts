@@ -48,6 +48,11 @@ export interface Quantity<M> {
    * coarser settings.
    */
   readonly usesHistory?: boolean;
+  /**
+   * Least relative error that is stated: where two settings happen to cross, their difference says nothing. Needed with
+   * `usesHistory`.
+   */
+  readonly errorFloor?: (model: M) => number;
   readonly notes?: (evaluation: Evaluation<M>, values: readonly number[]) => readonly ValidityNote[];
   readonly compute: (evaluation: Evaluation<M>, values: readonly number[]) => Computed;
 }
@@ -171,6 +176,7 @@ export function evaluateQuantity<M>(
   if ((definition.usesHistory === true || approximate) && evaluation.precision === "full") {
     error += Math.abs(computed.value - definition.compute(evaluation.coarse(), values).value);
   }
+  error = Math.max(error, (definition.errorFloor?.(evaluation.model) ?? 0) * Math.abs(computed.value));
   const rounding = 4 * Number.EPSILON * Math.abs(computed.value);
   return {
     name: definition.name,

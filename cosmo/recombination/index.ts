@@ -1,5 +1,6 @@
 export { baryonToPhotonRatio, baryonToPhotonRatioQuantity } from "./baryonToPhotonRatio";
 export { type Gas, gasPart, heliumToHydrogenRatio } from "./gas";
+export { historyErrorFloor } from "./historyErrorFloor";
 export {
   atomSettings,
   equilibriumAt,

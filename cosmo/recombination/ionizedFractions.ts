@@ -1,12 +1,13 @@
 import type { ModelEvaluation, ModelQuantity } from "../expansion";
 import { pastRedshiftArgument } from "../quantity";
+import { historyErrorFloor } from "./historyErrorFloor";
 import { ionizationHistoryPart } from "./ionizationHistory";
 import { recombinationNotes, recombinationSources } from "./tierStatement";
 
 /**
  * x_e of recombination alone: free electrons a hydrogen nucleus, without reionization.
  *
- * @param z redshift, 0 or more. Method: the model's tier; see ionizationHistory.ts. Accuracy 1e-8 (Saha 1e-12).
+ * @param z redshift, 0 or more. Method: the model's tier; see ionizationHistory.ts. Accuracy 5e-9 (Saha 3e-13).
  * @example residualIonizedFraction(evaluation, 1090)
  */
 export function residualIonizedFraction(evaluation: ModelEvaluation, z: number): number {
@@ -32,9 +33,10 @@ export const residualIonizedFractionQuantity: ModelQuantity = {
   description: "Free electrons a hydrogen nucleus, recombination alone",
   equation: String.raw`x_e(z) = n_e/n_\mathrm{H}`,
   method,
-  accuracy: 1e-7,
+  accuracy: 5e-9,
   sources: recombinationSources,
   usesHistory: true,
+  errorFloor: historyErrorFloor(5e-9),
   notes: ({ model }) => recombinationNotes(model),
   compute: (evaluation, [z]) => ({ value: residualIonizedFraction(evaluation, z!), error: 0 }),
 };
@@ -47,9 +49,10 @@ export const hydrogenIonizedFractionQuantity: ModelQuantity = {
   description: "Ionized share of hydrogen, recombination alone",
   equation: String.raw`x_p(z) = n_p/n_\mathrm{H}`,
   method,
-  accuracy: 1e-7,
+  accuracy: 5e-9,
   sources: recombinationSources,
   usesHistory: true,
+  errorFloor: historyErrorFloor(5e-9),
   notes: ({ model }) => recombinationNotes(model),
   compute: (evaluation, [z]) => ({ value: hydrogenIonizedFraction(evaluation, z!), error: 0 }),
 };

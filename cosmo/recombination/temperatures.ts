@@ -1,5 +1,6 @@
 import type { ModelEvaluation, ModelQuantity } from "../expansion";
 import { pastRedshiftArgument, redshiftArgument } from "../quantity";
+import { historyErrorFloor } from "./historyErrorFloor";
 import { ionizationHistoryPart } from "./ionizationHistory";
 import { recombinationNotes, recombinationSources } from "./tierStatement";
 
@@ -18,7 +19,7 @@ export function radiationTemperature(evaluation: ModelEvaluation, z: number): nu
  *
  * dT_m/dz = [8 sigma_T a T_r^4/(3 H (1+z) m_e c)] x_e/(1 + f_He + x_e) (T_m - T_r) + 2 T_m/(1+z).
  *
- * @param z redshift, 0 or more. Method: integrated with the ionization history; in tier `saha` equal to T_r. Accuracy 1e-8.
+ * @param z redshift, 0 or more. Method: integrated with the ionization history; in tier `saha` equal to T_r. Accuracy 2e-9.
  * Source: Peebles 1968; Seager, Sasselov & Scott 1999.
  */
 export function matterTemperature(evaluation: ModelEvaluation, z: number): number {
@@ -47,9 +48,10 @@ export const matterTemperatureQuantity: ModelQuantity = {
   description: "Temperature of the gas, recombination alone",
   equation: String.raw`\frac{dT_m}{dz} = \frac{8\sigma_T a T_r^4}{3H(1+z)m_e c}\,\frac{x_e\,(T_m - T_r)}{1+f_\mathrm{He}+x_e} + \frac{2T_m}{1+z}`,
   method: "integrated with the ionization history",
-  accuracy: 1e-7,
+  accuracy: 2e-9,
   sources: recombinationSources,
   usesHistory: true,
+  errorFloor: historyErrorFloor(2e-9),
   notes: ({ model }) => [
     ...recombinationNotes(model),
     { level: "note", text: "no heating by first light or reionization: not the temperature of gas today" },
