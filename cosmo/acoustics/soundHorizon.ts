@@ -19,7 +19,7 @@ import { redshiftArgument } from "../quantity";
  * form of that paper.
  *
  * @param z redshift above -1, for the closed form above 0; below z_drag the fluid no longer exists and the number is the formula's alone.
- * Method: adaptive Gauss-Kronrod in sqrt(a), in which the integrand is smooth from radiation to matter. Accuracy 1e-12.
+ * Method: adaptive Gauss-Kronrod in sqrt(a), in which the integrand is smooth from radiation to matter. Accuracy 1e-13.
  * Source: Hu & Sugiyama 1996; Eisenstein & Hu 1998, eq. 4.
  * @example soundHorizon(evaluation, 1059.94).value // 147.1
  */
@@ -54,7 +54,7 @@ export const soundHorizonQuantity: ModelQuantity = {
   equation: String.raw`r_s(z) = \int_0^{1/(1+z)} \frac{c_s\,da}{a^2 H}`,
   method: "adaptive Gauss-Kronrod quadrature in the square root of the scale factor",
   methodFor: (model) => methodWithFits("", fitsInForce(model, ["soundHorizon"])),
-  accuracy: 1e-12,
+  accuracy: 1e-13,
   sources: ["huSugiyama1996", "eisensteinHu1998"],
   notes: ({ model }) => fitsInForce(model, ["soundHorizon"]).flatMap(({ fit }) => fitNotes(fit, model)),
   compute: (evaluation, [z]) => soundHorizon(evaluation, z!),

@@ -8,7 +8,7 @@ import { antipodeNote, transverseDistance } from "./transverseDistance";
  *
  * F_AP = D_M(z) H(z)/c.
  *
- * @param z redshift, 0 or more. Beyond the turning point of a closed model: NoAnswerError. Accuracy 1e-12.
+ * @param z redshift, 0 or more. Beyond the turning point of a closed model: NoAnswerError. Accuracy 5e-14.
  * Source: Alcock & Paczynski 1979.
  * @example alcockPaczynskiRatio(evaluation, 0.5).value // 0.58 near Planck's parameters
  */
@@ -26,7 +26,7 @@ export const alcockPaczynskiRatioQuantity: ModelQuantity = {
   description: "Alcock-Paczynski ratio of transverse to line-of-sight size",
   equation: String.raw`F_{AP}(z) = \frac{D_M(z)\,H(z)}{c}`,
   method: "from the transverse comoving distance and the expansion rate",
-  accuracy: 1e-12,
+  accuracy: 5e-14,
   sources: ["alcockPaczynski1979"],
   notes: antipodeNote,
   compute: (evaluation, [z]) => alcockPaczynskiRatio(evaluation, z!),

@@ -10,7 +10,7 @@ import { antipodeNote, transverseDistance } from "./transverseDistance";
  * every sign of curvature, where Hogg's eq. 19 holds for an open or flat model and up to the equator of a closed one.
  *
  * @param from z1, 0 or more; @param to z2, at or above z1. Beyond the turning point of a closed model: NoAnswerError.
- * Accuracy 1e-12. Source: Hogg 1999, eqs 18 and 19.
+ * Accuracy 1e-13. Source: Hogg 1999, eqs 18 and 19.
  * @example angularDiameterDistance(evaluation, 0, 1.6).value // 1794 near Planck's parameters, its maximum
  */
 export function angularDiameterDistance(
@@ -32,7 +32,7 @@ export const angularDiameterDistanceQuantity: ModelQuantity = {
   description: "Angular-diameter distance",
   equation: String.raw`D_A(z_1, z_2) = \frac{D_M(z_1, z_2)}{1+z_2}`,
   method: "from the transverse comoving distance",
-  accuracy: 1e-12,
+  accuracy: 5e-14,
   sources: ["hogg1999"],
   notes: antipodeNote,
   compute: (evaluation, values) => angularDiameterDistance(evaluation, ...redshiftPair(values)),

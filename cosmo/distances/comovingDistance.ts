@@ -16,7 +16,7 @@ import { redshiftPair } from "./redshiftPair";
  * D_C(z1, z2) = c int_z1^z2 dz/H. Negative when z2 is below z1.
  *
  * @param from z1, @param to z2: above -1. Beyond the turning point of a closed model: NoAnswerError.
- * Method: adaptive Gauss-Kronrod in ln(1+z), where the integrand is smooth at all epochs. Accuracy 1e-12.
+ * Method: adaptive Gauss-Kronrod in ln(1+z), where the integrand is smooth at all epochs. Accuracy 1e-13.
  * Source: Hogg 1999, eq. 15.
  * @example comovingDistance(evaluation, 0, 1.1).value
  */
@@ -45,7 +45,7 @@ export const comovingDistanceQuantity: ModelQuantity = {
   description: "Line-of-sight comoving distance",
   equation: String.raw`D_C(z_1, z_2) = c \int_{z_1}^{z_2} \frac{dz}{H(z)}`,
   method: "adaptive Gauss-Kronrod quadrature in ln(1+z)",
-  accuracy: 1e-12,
+  accuracy: 1e-13,
   sources: ["hogg1999"],
   compute: (evaluation, values) => comovingDistance(evaluation, ...redshiftPair(values)),
 };

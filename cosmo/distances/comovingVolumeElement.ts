@@ -8,7 +8,7 @@ import { antipodeNote, transverseDistance } from "./transverseDistance";
  *
  * dV/dz = 4 pi D_M^2 c/H.
  *
- * @param z redshift, 0 or more. Beyond the turning point of a closed model: NoAnswerError. Accuracy 2e-12.
+ * @param z redshift, 0 or more. Beyond the turning point of a closed model: NoAnswerError. Accuracy 1e-13.
  * Source: Hogg 1999, eq. 28, times 4 pi.
  * @example comovingVolumeElement(evaluation, 1).value // 361 near Planck's parameters
  */
@@ -26,7 +26,7 @@ export const comovingVolumeElementQuantity: ModelQuantity = {
   description: "Comoving volume per unit redshift over the whole sky",
   equation: String.raw`\frac{dV_C}{dz} = 4\pi\,D_M(z)^2\,\frac{c}{H(z)}`,
   method: "from the transverse comoving distance and the expansion rate",
-  accuracy: 2e-12,
+  accuracy: 1e-13,
   sources: ["hogg1999"],
   notes: antipodeNote,
   compute: (evaluation, [z]) => comovingVolumeElement(evaluation, z!),

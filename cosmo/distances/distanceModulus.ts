@@ -21,7 +21,7 @@ const positiveRedshift: QuantityArgument = {
  * mu = 5 log10(D_L/10 pc).
  *
  * @param z redshift above 0; 0 and below: DomainError. Beyond the turning point of a closed model: NoAnswerError.
- * Accuracy 1e-12, relative; near z = 2e-9, where mu crosses 0, 2e-12 mag. Source: Hogg 1999, eq. 25.
+ * Accuracy 1e-13, relative; near z = 2e-9, where mu crosses 0, 2e-12 mag. Source: Hogg 1999, eq. 25.
  * @example distanceModulus(evaluation, 1).value // 44.16 near Planck's parameters
  */
 export function distanceModulus(evaluation: ModelEvaluation, z: number): Computed {
@@ -41,7 +41,7 @@ export const distanceModulusQuantity: ModelQuantity = {
   description: "Distance modulus",
   equation: String.raw`\mu(z) = 5 \log_{10}\frac{D_L(z)}{10\,\mathrm{pc}}`,
   method: "from the luminosity distance",
-  accuracy: 1e-12,
+  accuracy: 1e-13,
   sources: ["hogg1999"],
   notes: antipodeNote,
   compute: (evaluation, [z]) => distanceModulus(evaluation, z!),

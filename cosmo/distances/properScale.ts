@@ -9,7 +9,7 @@ import { antipodeNote } from "./transverseDistance";
  *
  * s = D_A times one arcsecond.
  *
- * @param z redshift, 0 or more. Beyond the turning point of a closed model: NoAnswerError. Accuracy 1e-12.
+ * @param z redshift, 0 or more. Beyond the turning point of a closed model: NoAnswerError. Accuracy 1e-13.
  * Source: Hogg 1999, section 6.
  * @example properScale(evaluation, 1).value // 8.2 near Planck's parameters
  */
@@ -27,7 +27,7 @@ export const properScaleQuantity: ModelQuantity = {
   description: "Proper size that fills one second of arc",
   equation: String.raw`s(z) = D_A(z)\,\frac{\pi}{648000}`,
   method: "from the angular-diameter distance",
-  accuracy: 1e-12,
+  accuracy: 1e-13,
   sources: ["hogg1999"],
   notes: antipodeNote,
   compute: (evaluation, [z]) => properScale(evaluation, z!),

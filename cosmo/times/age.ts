@@ -19,7 +19,7 @@ export const ageQuantity: ModelQuantity = {
   description: "Age of the universe today",
   equation: String.raw`t_0 = \int_0^1 \frac{da}{a H}`,
   method: "adaptive Gauss-Kronrod quadrature in the square root of the scale factor",
-  accuracy: 1e-12,
+  accuracy: 5e-13,
   sources: ["hogg1999"],
   compute: (evaluation) => age(evaluation),
 };

