@@ -1,5 +1,5 @@
 import { equalityRedshift, equalityRedshiftQuantity, type ModelEvaluation } from "../expansion";
-import { historyQuantity } from "../lastScattering";
+import { historyQuantity, throughLastScattering } from "../lastScattering";
 import { conformalTime } from "../times";
 import { lastScatteringDistancePart } from "./acousticAngle";
 import { soundHorizon } from "./soundHorizon";
@@ -32,6 +32,8 @@ const horizonAngle = historyQuantity({
   description: "Angle of the comoving horizon at equality, times 100",
   equation: String.raw`\theta_\mathrm{eq} = \frac{\eta(z_\mathrm{eq})}{D_M(z_*)}`,
   method: "quadrature",
+  steps: ["lastScattering"],
+  needsHistory: throughLastScattering,
   accuracy: 2e-12,
   sources: ["planck2018Parameters"],
   compute: equalityHorizonAngle,
@@ -44,6 +46,8 @@ const soundAngle = historyQuantity({
   description: "Angle of the sound horizon at equality, times 100",
   equation: String.raw`\theta_\mathrm{s,eq} = \frac{r_s(z_\mathrm{eq})}{D_M(z_*)}`,
   method: "quadrature",
+  steps: ["lastScattering", "soundHorizon"],
+  needsHistory: throughLastScattering,
   accuracy: 2e-12,
   sources: ["planck2018Parameters"],
   compute: equalitySoundAngle,

@@ -2,7 +2,7 @@ import type { ModelEvaluation, ModelQuantity } from "../expansion";
 import { fitNotes } from "../fits";
 import type { ClosedModel } from "../model";
 import type { QuantityArgument } from "../quantity";
-import { recombinationNotes, recombinationSources } from "../recombination";
+import { historyErrorFloor, recombinationNotes, recombinationSources } from "../recombination";
 import type { SourceKey } from "../sources";
 import { fitsInForce, methodWithFits, type ReplaceableStep } from "./fitsInForce";
 
@@ -49,6 +49,7 @@ export function historyQuantity(fields: HistoryQuantityFields): ModelQuantity {
     accuracy,
     arguments: fields.arguments ?? [],
     usesHistory: true,
+    errorFloor: (model) => (needsHistory(model) ? historyErrorFloor(accuracy)(model) : 0),
     methodFor: (model) => methodWithFits(fields.methodBesideFits ?? method, inForce(model)),
     sources: (model) => [
       ...new Set([
