@@ -57,8 +57,14 @@ export function accuracyMarkdown(rows: readonly AccuracyRow[]): string {
       `| ${row.quantity} | ${row.stated.toExponential(0)} | ${row.maximum.toExponential(1)} | ${row.median.toExponential(1)} | ${row.rows} |`,
   );
   return [
+    "# Accuracy",
+    "",
+    "Made by `npm run accuracy`. Relative differences to the references of `values/` (48 models, generators beside them), the bound",
+    "that the register states, and how many values were compared. A test fails when a bound is exceeded or 100 times too loose.",
+    "",
     "| quantity | stated | measured, largest | measured, median | values |",
     "|---|---|---|---|---|",
     ...lines,
+    "",
   ].join("\n");
 }

@@ -1,60 +1,18 @@
-import { readdirSync, readFileSync } from "node:fs";
-import { join } from "node:path";
 import { describe, expect, it } from "vitest";
 import type { ModelQuantity } from "../../cosmo/expansion";
-import type { ModelGivens, RecombinationTier } from "../../cosmo/model";
+import type { ModelGivens } from "../../cosmo/model";
 import { quantityRegister } from "../../cosmo/quantities";
-import { evaluateModel, type ModelNumbers } from "../../cosmo/solve";
 import { referenceBounds } from "./bounds";
+import { ReferenceModels, readReferences, referenceModels } from "./readReferences";
 
 /**
  * Every file of values/ against the program. The values come from generators/ (NumPy, SciPy, mpmath), which import nothing of the
  * program; a file holds each value at two tolerances.
  */
-interface ReferenceFile {
-  quantity: string;
-  unit: string;
-  rows: [string, ...number[]][];
-}
-
-const folder = join(__dirname, "values");
-const names = readdirSync(folder)
-  .filter((file) => file.endsWith(".json"))
-  .map((file) => file.slice(0, -".json".length))
-  .sort();
-const tiers = ["saha", "peebles", "calibrated"];
-
-const givensByName = new Map(
-  (
-    JSON.parse(readFileSync(join(__dirname, "models.json"), "utf8")) as {
-      name: string;
-      givens: ModelGivens;
-    }[]
-  ).map((model) => [model.name, model.givens]),
-);
-
-const evaluated = new Map<string, ModelNumbers>();
-
-/** A model at a tier, evaluated once for all files. */
-function numbersOf(model: string, tier: string | undefined): ModelNumbers {
-  const key = `${model} ${tier}`;
-  let numbers = evaluated.get(key);
-  if (numbers === undefined) {
-    const givens = givensByName.get(model);
-    if (givens === undefined) throw new Error(`models.json has no model ${model}`);
-    numbers = evaluateModel(tier === undefined ? givens : { ...givens, recombination: tier as RecombinationTier });
-    evaluated.set(key, numbers);
-  }
-  return numbers;
-}
-
-/** What a file's name says after the quantity: a tier of recombination, or that pairs of redshifts are asked for. */
-function tierOf(name: string): string | undefined {
-  const tag = name.split(".")[1];
-  if (tag === undefined || tag === "between") return undefined;
-  if (tiers.includes(tag)) return tag;
-  throw new Error(`${name}.json: ${tag} is neither a tier nor "between"`);
-}
+const files = readReferences();
+const names = files.map((file) => file.name);
+const givensByName = referenceModels();
+const models = new ReferenceModels();
 
 /** Relative; a reference of zero (massless neutrinos have no massive density) must be met exactly. */
 const difference = (value: number, expected: number) =>
@@ -83,43 +41,39 @@ describe("reference values", () => {
     expect(count((givens) => givens.conventions?.closure === "radiationOnTop")).toBeGreaterThanOrEqual(8);
   });
 
-  for (const name of names) {
-    const file = JSON.parse(readFileSync(join(folder, `${name}.json`), "utf8")) as ReferenceFile;
+  for (const file of files) {
+    const { name, tier } = file;
     const stated = referenceBounds[name];
     if (stated === undefined) continue;
     const [bound] = stated;
     const definition = quantityRegister.get(file.quantity);
 
     it(`${name}: the two tolerances of the reference agree within a tenth of ${bound}, and its values are not zero`, () => {
-      const zeros = file.rows.filter((row) => row[row.length - 2] === 0).length;
+      const zeros = file.rows.filter((row) => row.value === 0).length;
       expect(zeros).toBeLessThan(file.rows.length / 4);
       for (const row of file.rows) {
-        const [value, looser] = row.slice(-2) as [number, number];
-        expect(difference(looser, value), row.join(" ")).toBeLessThan(bound / 10);
+        expect(difference(row.looserValue, row.value), JSON.stringify(row)).toBeLessThan(bound / 10);
       }
     });
 
     it(`${name} meets its reference within ${bound}`, () => {
       expect(definition, `the register has no ${file.quantity}`).toBeDefined();
-      const tier = tierOf(name);
       expect(unitOf(definition!)).toBe(file.unit);
       let worst = 0;
       let worstRow = "";
       for (const row of file.rows) {
-        const [model, ...numbers] = row;
-        const expected = numbers[numbers.length - 2]!;
-        const asked = numbersOf(model, tier);
-        const values = numbers.slice(0, -2);
+        const { arguments: values, value: expected } = row;
+        const asked = models.numbers(row.model, tier);
         const value = asked.value(file.quantity, ...values);
         // What does not hang on an integrated history knows its own error.
         if (definition!.usesHistory !== true && tier === undefined) {
           const { error } = asked.quantity(file.quantity, ...values);
-          expect(Math.abs(value - expected), row.join(" ")).toBeLessThanOrEqual(error);
+          expect(Math.abs(value - expected), JSON.stringify(row)).toBeLessThanOrEqual(error);
         }
         const off = difference(value, expected);
         if (!(off <= worst)) {
           worst = off;
-          worstRow = row.join(" ");
+          worstRow = JSON.stringify(row);
         }
         // A bound so loose that ten times it would pass too tests nothing.
         if (expected !== 0) expect(difference(value, expected * (1 + 10 * bound))).toBeGreaterThan(bound);
