@@ -1,5 +1,6 @@
 export { type AcousticScaleValues, acousticScaleCell } from "./acousticScaleCell";
 export { type DistanceCellOptions, type DistanceValues, distanceCell } from "./distanceCell";
+export { type ExpansionCellOptions, type ExpansionValues, expansionCell } from "./expansionCell";
 export { type LastScatteringValues, lastScatteringCell } from "./lastScatteringCell";
 export { type RecombinationCellOptions, type RecombinationValues, recombinationCell } from "./recombinationCell";
 export type { RedshiftList } from "./redshiftList";
