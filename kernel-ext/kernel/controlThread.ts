@@ -21,11 +21,10 @@ export type FromControl =
   | { type: "failed"; message: string }
   | { type: "request"; id: number; message: WireMessage }
   | { type: "refused"; message: string }
-  | { type: "tick" }
-  | { type: "closed" };
+  | { type: "tick" };
 
 /** From the main thread to this one. */
-export type ToControl = { type: "reply"; id: number; frames: Uint8Array[] } | { type: "close" };
+export type ToControl = { type: "reply"; id: number; frames: (Uint8Array | string)[] } | { type: "close" };
 
 /** How long the main thread may take to answer before running code is ended by force. */
 const patience = 150;
@@ -151,7 +150,6 @@ async function serve(port: MessagePort, data: ControlThreadData): Promise<void> 
     sending.then(() => {
       control.close();
       heartbeat.close();
-      post({ type: "closed" });
       port.close();
     });
   });

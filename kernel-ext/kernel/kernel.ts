@@ -10,7 +10,14 @@ import { History } from "./history";
 import { portableBundle } from "./mimeBundle";
 import { sleep } from "./ownTimers";
 import type { SendQueue } from "./sendQueue";
-import { type JsonObject, type MessageHeader, protocolVersion, type WireCodec, type WireMessage } from "./wire";
+import {
+  type Frame,
+  type JsonObject,
+  type MessageHeader,
+  protocolVersion,
+  type WireCodec,
+  type WireMessage,
+} from "./wire";
 
 export interface KernelParts {
   codec: WireCodec;
@@ -153,7 +160,7 @@ export class Kernel {
     this.publishStatus("idle", header);
   }
 
-  private replyFrames(reply: { type: string; content: JsonObject }, request: WireMessage): Buffer[] {
+  private replyFrames(reply: { type: string; content: JsonObject }, request: WireMessage): Frame[] {
     return this.parts.codec.compose(reply.type, reply.content, {
       parent: request.header,
       identities: request.identities,
@@ -161,7 +168,7 @@ export class Kernel {
   }
 
   /** Answers a request of the control socket at once; the frames are sent by the control thread. */
-  control(message: WireMessage): Buffer[] {
+  control(message: WireMessage): Frame[] {
     this.publishStatus("busy", message.header);
     const reply = this.answer(message) ?? { type: "error", content: { status: "error" } };
     const frames = this.replyFrames(reply, message);

@@ -106,6 +106,12 @@ async function main(connectionFile: string): Promise<void> {
     stdinSocket.close();
     leave(0);
   };
+  // Only when the thread has gone: two threads that take zeromq down at once end in a crash now and then.
+  thread.on("exit", (code) => {
+    if (!leaving) log(`the control thread ended with code ${code}`);
+    close();
+  });
+  thread.on("error", (error) => log(`the control thread failed: ${error.stack ?? error}`));
   const shutdown = (): void => {
     if (leaving) return;
     leaving = true;
@@ -150,7 +156,7 @@ async function main(connectionFile: string): Promise<void> {
     else if (message.type === "failed") {
       log(`the control thread failed: ${message.message}`);
       leave(/EADDRINUSE|in use/i.test(message.message) ? portTakenExitCode : 1);
-    } else if (message.type === "closed") close();
+    }
     if (kernel) {
       // Ending code by force may have dropped the continuations of these.
       iopub.revive();

@@ -6,9 +6,11 @@
  * queued at that moment, so the wait for the send under way can be renewed at any time with {@link SendQueue.revive}.
  */
 
+import type { Frame } from "./wire";
+
 /** The part of a zeromq socket that is needed here. */
 export interface FrameSocket {
-  send(frames: Buffer[]): Promise<void>;
+  send(frames: Frame[]): Promise<void>;
 }
 
 /** Text of one stream of one cell, merged with what follows it while it waits. */
@@ -17,10 +19,10 @@ interface StreamEntry {
   name: string;
   text: string[];
   length: number;
-  compose(text: string): Buffer[];
+  compose(text: string): Frame[];
 }
 
-type Entry = { frames: Buffer[] } | StreamEntry;
+type Entry = { frames: Frame[] } | StreamEntry;
 
 /** Waiting text is merged up to this many characters; more goes into a message of its own. */
 const mergeLimit = 1 << 18;
@@ -41,7 +43,7 @@ export class SendQueue {
     return this.entries.length - this.next;
   }
 
-  push(frames: Buffer[]): void {
+  push(frames: Frame[]): void {
     this.entries.push({ frames });
     this.pump();
   }
@@ -50,7 +52,7 @@ export class SendQueue {
    * Queues text of a stream; text that directly follows text of the same `key` and `name` joins its message if that one
    * still waits.
    */
-  pushText(key: unknown, name: string, text: string, compose: (text: string) => Buffer[]): void {
+  pushText(key: unknown, name: string, text: string, compose: (text: string) => Frame[]): void {
     const last = this.next < this.entries.length ? this.entries[this.entries.length - 1] : undefined;
     if (last && "text" in last && last.key === key && last.name === name && last.length < mergeLimit) {
       last.text.push(text);

@@ -8,6 +8,12 @@ import { createHmac, randomUUID, timingSafeEqual } from "node:crypto";
 /** Separates routing identities from the signed part of a message. */
 const delimiter = Buffer.from("<IDS|MSG>");
 
+/**
+ * A part of a message as it is handed to a socket. The JSON parts stay strings, of which zeromq makes copies of its own: a
+ * larger buffer it would share, and give back to its thread also when that thread is already gone, with a crash as the end.
+ */
+export type Frame = Buffer | string;
+
 export const protocolVersion = "5.3";
 
 export interface MessageHeader {
@@ -62,7 +68,7 @@ export class WireCodec {
     private readonly refuseReplays = false,
   ) {}
 
-  private sign(parts: Buffer[]): string {
+  private sign(parts: readonly Frame[]): string {
     if (this.key === "") return "";
     const hash = createHmac("sha256", this.key);
     for (const part of parts) hash.update(part);
@@ -114,11 +120,11 @@ export class WireCodec {
   }
 
   /** The frames of a message, signed. */
-  frames(message: WireMessage): Buffer[] {
+  frames(message: WireMessage): Frame[] {
     const parts = [message.header, message.parent, message.metadata, message.content].map((part) =>
-      Buffer.from(JSON.stringify(part), "utf8"),
+      JSON.stringify(part),
     );
-    return [...message.identities, delimiter, Buffer.from(this.sign(parts), "latin1"), ...parts, ...message.buffers];
+    return [...message.identities, delimiter, this.sign(parts), ...parts, ...message.buffers];
   }
 
   /** The frames of a new message of `type` that belongs to `parent`. */
@@ -126,7 +132,7 @@ export class WireCodec {
     type: string,
     content: JsonObject,
     options: { parent?: MessageHeader | undefined; identities?: Buffer[]; metadata?: JsonObject } = {},
-  ): Buffer[] {
+  ): Frame[] {
     return this.frames({
       identities: options.identities ?? [],
       header: this.header(type),

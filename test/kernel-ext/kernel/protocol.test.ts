@@ -2,7 +2,7 @@
 import { randomUUID } from "node:crypto";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import * as zmq from "zeromq";
-import { type ConnectionInfo, socketAddress, WireCodec } from "../../../kernel-ext/kernel/wire";
+import { type ConnectionInfo, type Frame, socketAddress, WireCodec } from "../../../kernel-ext/kernel/wire";
 import { KernelSession, until } from "./kernelSession";
 
 let session: KernelSession;
@@ -151,7 +151,7 @@ describe("execute_request", () => {
 describe("messages that cannot be trusted", () => {
   const codec = (info: ConnectionInfo, key = info.key) => new WireCodec(key);
 
-  async function sendRaw(socket: "shell" | "control", frames: Buffer[][]): Promise<number> {
+  async function sendRaw(socket: "shell" | "control", frames: Frame[][]): Promise<number> {
     const dealer = new zmq.Dealer({ linger: 1000, receiveTimeout: 400, routingId: randomUUID() });
     dealer.connect(socketAddress(session.client.info, socket));
     for (const one of frames) await dealer.send(one);

@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { SendQueue } from "../../../kernel-ext/kernel/sendQueue";
+import type { Frame } from "../../../kernel-ext/kernel/wire";
 
 /** A socket that refuses a second send while one is under way, as zeromq does. */
 class OneAtATime {
@@ -7,7 +8,7 @@ class OneAtATime {
   readonly pending: (() => void)[] = [];
   failNext = false;
 
-  send(frames: Buffer[]): Promise<void> {
+  send(frames: Frame[]): Promise<void> {
     if (this.pending.length > 0) throw new Error("busy");
     if (this.failNext) {
       this.failNext = false;
