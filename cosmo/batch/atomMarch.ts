@@ -6,7 +6,7 @@ import type { BatchRow } from "./batchRow";
 import { heliumInEquilibrium, marchHelium } from "./marchHelium";
 import { marchHydrogen } from "./marchHydrogen";
 import { marchWithHelium, startHydrogen } from "./marchWithHelium";
-import { gridBlocks, gridSize, gridTemperatures } from "./temperatureGrid";
+import { gridBlocks, gridSize, gridTemperatures, heliumBlock } from "./temperatureGrid";
 
 /** The state of the three-level atom at every point of the grid, and what the march needs of the row and the tier. */
 export interface MarchState {
@@ -16,6 +16,8 @@ export interface MarchState {
   readonly cooling: Float64Array;
   readonly ionized: Float64Array;
   readonly neutralHelium: Float64Array;
+  /** Where on the coarse block the opacity by hydrogen stands in its table; see heliumEscape.ts. */
+  readonly continuumPlaces: Float64Array;
   /** T_r^3/(8 pi L_a^3) times the tier's correction, over 100 km/s/Mpc. */
   readonly escapes: Float64Array;
   /** 8 sigma_T a T_r^4/(3 m_e c) over 100 km/s/Mpc. */
@@ -38,6 +40,7 @@ export class AtomMarch implements MarchState {
   readonly cooling = new Float64Array(gridSize);
   readonly ionized = new Float64Array(gridSize);
   readonly neutralHelium = new Float64Array(gridSize);
+  readonly continuumPlaces = new Float64Array(heliumBlock.end);
   readonly escapes = new Float64Array(gridSize);
   readonly compton: Float64Array;
   private escapeTemperature = -1;

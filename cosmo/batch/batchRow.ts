@@ -25,6 +25,7 @@ export class BatchRow {
   massSum = 0.5;
   /** K. */
   photonTemperature = 0.5;
+  logPhotonTemperature = 0.5;
   /** Y_p by mass. */
   helium = 0.5;
   /** omega of one massless species. */

@@ -154,6 +154,7 @@ export class RowCloser {
     const neutrino = neutrinoTemperature(effectiveNumber, temperature);
     row.effectiveNumber = effectiveNumber;
     row.photonTemperature = temperature;
+    row.logPhotonTemperature = Math.log(temperature);
     row.photonDensity = photons;
     row.speciesDensity = species;
     row.massCount = 0;

@@ -17,7 +17,7 @@ const fineJoint = mainFirst + heliumBlock.stride;
 
 /** T_r, K, between which He++ takes its second electron; the pieces of the integral above the grid end there. */
 const pieceEnds = [gridTemperatures[topPoint], 5000 * 2.7255, 6500 * 2.7255];
-const pieceNodes = [8, 8, 6];
+const pieceNodes = [6, 7, 5];
 
 /** A node above the grid with what Saha equilibrium needs there. */
 interface HotNode {
@@ -115,7 +115,7 @@ export class GridDamping {
 
   private above(row: BatchRow): number {
     const scale = 1 / row.photonTemperature;
-    const logScale = Math.log(row.photonTemperature);
+    const logScale = row.logPhotonTemperature;
     const { loading, heliumRatio: ratio } = row;
     let sum = 0;
     for (let k = 0; k < this.nodes.length; k++) {
@@ -125,7 +125,7 @@ export class GridDamping {
       const once = node.helium / density;
       const twice = node.heliumIon / density;
       let electrons = 1 + ratio;
-      for (let pass = 0; pass < 3; pass++) {
+      for (let pass = 0; pass < 2; pass++) {
         const first = once / electrons;
         const second = (first * twice) / electrons;
         electrons = 1 + (ratio * (first + 2 * second)) / (1 + first + second);

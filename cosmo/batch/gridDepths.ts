@@ -6,8 +6,10 @@ import { firstPointBelow, gridSize, gridStep, gridTemperatures } from "./tempera
 const searchStart = firstPointBelow(2450);
 const searchEnd = firstPointBelow(4300);
 
-/** One over the ratio of neighboring temperatures in the last block, for the logarithmic slope there. */
-const lastSlopeStep = Math.log(gridTemperatures[gridSize - 2] / gridTemperatures[gridSize - 1]);
+/** The last point: T_r, its logarithm, and ln of the ratio of neighboring temperatures there. */
+const lastTemperature = gridTemperatures[gridSize - 1];
+const logLastTemperature = Math.log(lastTemperature);
+const lastStep = Math.log(gridTemperatures[gridSize - 2] / lastTemperature);
 
 /** Where a depth reaches one. */
 export interface Crossing {
@@ -15,8 +17,8 @@ export interface Crossing {
   lower: number;
   /** How far the crossing lies above that point, in steps: 0 to 1. */
   part: number;
-  /** ln T_r there. */
-  u: number;
+  /** T_r there, K. */
+  temperature: number;
 }
 
 /**
@@ -24,37 +26,48 @@ export interface Crossing {
  * law from the last point (z = 20) to today.
  */
 export class GridDepths {
-  /** dtau/du at every point. */
-  readonly rate = new Float64Array(gridSize);
-  readonly lastScattering: Crossing = { lower: -1, part: 0.5, u: 0.5 };
-  readonly drag: Crossing = { lower: -1, part: 0.5, u: 0.5 };
+  /** dtau/du where crossings are looked for. */
+  private readonly rate = new Float64Array(gridSize);
+  readonly lastScattering: Crossing = { lower: -1, part: 0.5, temperature: 0.5 };
+  readonly drag: Crossing = { lower: -1, part: 0.5, temperature: 0.5 };
   private readonly dragRate = new Float64Array(gridSize);
   private readonly weights = tailWeights(searchStart);
-  private readonly dragWeights = this.weights.map((weight, i) => weight * gridTemperatures[i]);
   private readonly scratch = new Float64Array(6);
 
   run(row: BatchRow, inverseRate: Float64Array, ionized: Float64Array): void {
-    const { rate, dragRate, weights, dragWeights } = this;
+    const { rate, dragRate, weights } = this;
+    const temperatures = gridTemperatures;
     const scale = row.scattering / row.photonTemperature ** 3;
     const perLoading = 1 / (row.loading * row.photonTemperature);
-    for (let i = searchEnd - 3; i < gridSize; i++) {
-      const temperature = gridTemperatures[i];
-      rate[i] = scale * temperature * temperature * temperature * ionized[i] * inverseRate[i];
-    }
-    for (let i = searchEnd - 3; i < searchStart + 3; i++) dragRate[i] = rate[i] * gridTemperatures[i] * perLoading;
     let photon = 0;
     let drag = 0;
-    for (let i = searchStart - 2; i < gridSize; i++) {
-      photon += weights[i] * rate[i];
-      drag += dragWeights[i] * rate[i];
+    for (let i = searchEnd - 3; i < searchStart + 3; i++) {
+      const temperature = temperatures[i];
+      const here = scale * temperature * temperature * temperature * ionized[i] * inverseRate[i];
+      rate[i] = here;
+      dragRate[i] = here * temperature * perLoading;
     }
-    drag *= perLoading;
-    // dtau/du = A T^p below the grid, to T_cmb.
-    const last = gridSize - 1;
-    const slope = Math.log(rate[last - 1] / rate[last]) / lastSlopeStep;
-    const reach = Math.log(gridTemperatures[last] / row.photonTemperature);
-    photon += (rate[last] / slope) * (1 - Math.exp(-slope * reach));
-    drag += ((rate[last] * gridTemperatures[last] * perLoading) / (slope + 1)) * (1 - Math.exp(-(slope + 1) * reach));
+    for (let i = searchStart - 2; i < searchStart + 3; i++) {
+      photon += weights[i] * rate[i];
+      drag += weights[i] * dragRate[i];
+    }
+    let here = 1;
+    let above = 1;
+    for (let i = searchStart + 3; i < gridSize; i++) {
+      const temperature = temperatures[i];
+      above = here;
+      here = scale * temperature * temperature * temperature * ionized[i] * inverseRate[i];
+      const weighted = weights[i] * here;
+      photon += weighted;
+      drag += weighted * temperature * perLoading;
+    }
+    // dtau/du = A T^p below the grid, to T_cmb; p from the last two points by the series of the area hyperbolic tangent.
+    const t = (above - here) / (above + here);
+    const slope = (2 * t * (1 + (t * t) / 3)) / lastStep;
+    const left = Math.exp(slope * (row.logPhotonTemperature - logLastTemperature));
+    photon += (here / slope) * (1 - left);
+    drag +=
+      ((here * lastTemperature * perLoading) / (slope + 1)) * (1 - (left * row.photonTemperature) / lastTemperature);
     this.cross(rate, photon, this.lastScattering);
     this.cross(dragRate, drag, this.drag);
   }
@@ -99,6 +112,8 @@ export class GridDepths {
     }
     out.lower = lower;
     out.part = part;
-    out.u = Math.log(gridTemperatures[lower]) + gridStep * part;
+    // e^(h part) by its series.
+    const s = gridStep * part;
+    out.temperature = gridTemperatures[lower] * (1 + s * (1 + (s / 2) * (1 + (s / 3) * (1 + (s / 4) * (1 + s / 5)))));
   }
 }

@@ -73,9 +73,8 @@ export class GridExpansion {
     held[0] = row.photonTemperature;
     if (same) return;
     neutrinos.fill(0);
-    const logTemperature = Math.log(row.photonTemperature);
     for (let m = 0; m < row.massCount; m++) {
-      addNeutrinoEnergy(row.logMassRatios[m], logTemperature, row.massShares[m], neutrinos);
+      addNeutrinoEnergy(row.logMassRatios[m], row.logPhotonTemperature, row.massShares[m], neutrinos);
     }
   }
 }

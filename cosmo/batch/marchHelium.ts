@@ -3,15 +3,18 @@ import type { MarchState } from "./atomMarch";
 import { heliumColumns, hydrogenColumns } from "./atomTables";
 import { pastWeights, predictionWeights, slopeWeight } from "./backwardDifferences";
 import type { BatchRow } from "./batchRow";
-import { lineEscapes } from "./heliumEscape";
+import { continuumPlace, lineEscapes } from "./heliumEscape";
 import { equilibriumPoints, gridStep, heliumAtMainTop, heliumBlock, heliumEnd, mainFirst } from "./temperatureGrid";
+
+/** Points in equilibrium before the first step: one more than the formula looks back at, for the extrapolation two steps ahead. */
+const startPoints = equilibriumPoints + 1;
 
 /** Fixed-point passes for 1 - x_p in Saha equilibrium; each gains the factor 1 - x_p, at most 0.02 where it is asked for. */
 const passes = 3;
 
 /** Saha equilibrium of hydrogen and helium on the coarse block from `from` to before `to`. */
 function fillEquilibrium(state: MarchState, row: BatchRow, from: number, to: number): void {
-  const { tables, neutral, ionized, neutralHelium } = state;
+  const { tables, neutral, ionized, neutralHelium, continuumPlaces } = state;
   const { hydrogen: rates, helium, hydrogenSaha } = tables;
   const density = row.hydrogenDensity / row.photonTemperature ** 3;
   const ratio = row.heliumRatio;
@@ -29,6 +32,7 @@ function fillEquilibrium(state: MarchState, row: BatchRow, from: number, to: num
     neutral[i] = share;
     // y (x_e + s) = s.
     neutralHelium[i] = electrons / (electrons + s);
+    continuumPlaces[i] = continuumPlace((helium[i * heliumColumns + 10] * ratio * neutralHelium[i]) / share);
     ionized[i] = electrons;
   }
 }
@@ -43,10 +47,10 @@ export function heliumInEquilibrium(state: MarchState, row: BatchRow): void {
  * at the points of the fine block, every second of which lies between two of the coarse one.
  */
 export function marchHelium(state: MarchState, row: BatchRow, inverseRate: Float64Array): void {
-  const { tables, neutral, ionized, neutralHelium, newtonSteps } = state;
+  const { tables, neutral, ionized, neutralHelium, continuumPlaces: places, newtonSteps } = state;
   const { hydrogen: rates, helium, hydrogenSaha } = tables;
   const { first, end, stride } = heliumBlock;
-  fillEquilibrium(state, row, first, first + equilibriumPoints);
+  fillEquilibrium(state, row, first, first + startPoints);
   const c1 = pastWeights[0];
   const c2 = pastWeights[1];
   const c3 = pastWeights[2];
@@ -62,29 +66,34 @@ export function marchHelium(state: MarchState, row: BatchRow, inverseRate: Float
   const density = row.hydrogenDensity / row.photonTemperature ** 3;
   const ratio = row.heliumRatio;
   const weight = (stride * gridStep * slopeWeight) / hundredKmPerSecondPerMpc;
-  const last = first + equilibriumPoints - 1;
-  let x = neutral[last];
+  const perRate = 1 / hundredKmPerSecondPerMpc;
+  const last = first + startPoints - 1;
   let y1 = neutralHelium[last];
   let y2 = neutralHelium[last - 1];
   let y3 = neutralHelium[last - 2];
   let y4 = neutralHelium[last - 3];
   let y5 = neutralHelium[last - 4];
   let y6 = neutralHelium[last - 5];
-  for (let i = first + equilibriumPoints; i < end; i++) {
+  for (let i = first + startPoints; i < end; i++) {
     const at = i * heliumColumns;
     const n = density * rates[i * hydrogenColumns + 9];
     const past = c1 * y1 + (c2 * y2 + c3 * y3 + (c4 * y4 + c5 * y5 + c6 * y6));
     let y = p1 * y1 + (p2 * y2 + p3 * y3 + (p4 * y4 + p5 * y5 + p6 * y6));
-    // The prediction of a share that has come to its end may pass it by a rounding's width.
-    if (y > 1) y = 1;
+    // The opacity by hydrogen goes as the eighth root of a power: smooth enough to be extrapolated two steps, which takes
+    // its square roots off the chain from one point to the next.
+    const place =
+      21 * places[i - 2] -
+      70 * places[i - 3] +
+      (105 * places[i - 4] - 84 * places[i - 5]) +
+      (35 * places[i - 6] - 6 * places[i - 7]);
     const hydrogen = hydrogenSaha[i] / n;
-    const electrons = 1 + ratio * (1 - y);
-    x = electrons / (hydrogen + electrons);
-    x = (electrons - x) / (hydrogen + electrons - x);
+    // 1 - x_p enters the electrons alone, and is small wherever helium still changes: the last point's helium is near enough.
+    const before = 1 / (1 + hydrogen / (1 + ratio * (1 - y1)));
     const ionizations = helium[at + 2];
-    const through = weight * inverseRate[i] * lineEscapes(helium, at, ratio * y, n * inverseRate[i], x);
+    const depths = ratio * y * n * inverseRate[i] * perRate;
+    const through = weight * inverseRate[i] * lineEscapes(helium, at, depths, place);
     for (let k = 0; k < newtonSteps; k++) {
-      const held = n * (1 - x + ratio * (1 - y));
+      const held = n * (1 - before + ratio * (1 - y));
       const missing = y - past - through * (held * (1 - y) - ionizations * y);
       y -= missing / (1 + through * (held + n * ratio * (1 - y) + ionizations));
     }
@@ -94,6 +103,9 @@ export function marchHelium(state: MarchState, row: BatchRow, inverseRate: Float
     y3 = y2;
     y2 = y1;
     y1 = y;
+    const electrons = 1 - before + ratio * (1 - y);
+    const x = electrons / (hydrogen + electrons);
+    places[i] = continuumPlace((helium[at + 10] * ratio * y * (hydrogen + electrons)) / electrons);
     neutral[i] = x;
     neutralHelium[i] = y;
     ionized[i] = 1 - x + ratio * (1 - y);

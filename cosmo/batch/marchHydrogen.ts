@@ -55,6 +55,8 @@ export function marchHydrogen(state: MarchState, b: number, row: BatchRow, inver
   let d3 = cooling[last - 2 * back];
   let d4 = cooling[last - 3 * back];
   let d5 = cooling[last - 4 * back];
+  let d6 = cooling[last - 5 * back];
+  let d7 = cooling[last - 6 * back];
   for (let i = start; i < end; i++) {
     const inverse = inverseRate[i];
     const span = weight * inverse;
@@ -62,7 +64,7 @@ export function marchHydrogen(state: MarchState, b: number, row: BatchRow, inver
     const pastX = c1 * x1 + (c2 * x2 + c3 * x3 + (c4 * x4 + c5 * x5 + c6 * x6));
     let x = p1 * x1 + (p2 * x2 + p3 * x3 + (p4 * x4 + p5 * x5 + p6 * x6));
     const pastD = t1 * d1 + (t2 * d2 + (t3 * d3 + t4 * d4));
-    const predictedD = 5 * (d1 - d4) + (10 * (d3 - d2) + d5);
+    const predictedD = 21 * d2 - 70 * d3 + (105 * d4 - 84 * d5) + (35 * d6 - 6 * d7);
 
     let recombination = density * rates[at];
     if (predictedD < seriesLimit) {
@@ -89,13 +91,17 @@ export function marchHydrogen(state: MarchState, b: number, row: BatchRow, inver
     }
     const electrons = 1 - x;
     const particles = others + electrons;
-    const d = ((pastD + thermalStep) * particles) / (particles * (1 + thermalStep) + thermalStep * inverse * compton[i] * electrons);
+    const d =
+      ((pastD + thermalStep) * particles) /
+      (particles * (1 + thermalStep) + thermalStep * inverse * compton[i] * electrons);
     x6 = x5;
     x5 = x4;
     x4 = x3;
     x3 = x2;
     x2 = x1;
     x1 = x;
+    d7 = d6;
+    d6 = d5;
     d5 = d4;
     d4 = d3;
     d3 = d2;

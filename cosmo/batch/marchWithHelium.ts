@@ -120,7 +120,9 @@ export function marchWithHelium(state: MarchState, row: BatchRow, inverseRate: F
     const electrons = 1 - x + ratio * once;
     const particles = 1 + ratio + electrons;
     // The step's length in ln T_r once more, since d falls by itself as 1 - d.
-    const d = ((pastD + thermalStep) * particles) / (particles * (1 + thermalStep) + thermalStep * inverse * compton[i] * electrons);
+    const d =
+      ((pastD + thermalStep) * particles) /
+      (particles * (1 + thermalStep) + thermalStep * inverse * compton[i] * electrons);
     x6 = x5;
     x5 = x4;
     x4 = x3;

@@ -76,10 +76,10 @@ export class RowEngine {
       this.depths.run(row, inverseRate, this.march.ionized);
       const { lastScattering, drag } = this.depths;
       if (lastScattering.lower < 0 || drag.lower < 0) return rowStatus.offGrid;
-      const star = row.photonTemperature * Math.exp(-lastScattering.u);
-      const dragScale = row.photonTemperature * Math.exp(-drag.u);
-      this.lastScatteringRedshift = 1 / star - 1;
-      this.dragRedshift = 1 / dragScale - 1;
+      const star = row.photonTemperature / lastScattering.temperature;
+      const dragScale = row.photonTemperature / drag.temperature;
+      this.lastScatteringRedshift = lastScattering.temperature / row.photonTemperature - 1;
+      this.dragRedshift = drag.temperature / row.photonTemperature - 1;
       this.horizons.run(row, star, dragScale);
       if (needs.damping) {
         this.dampingWavenumber = this.damping.run(row, inverseRate, this.march.ionized, lastScattering);

@@ -19,8 +19,8 @@ export const mainTop = Math.log(mainTopTemperature);
 /** Steps of {@link gridStep} between the points of the helium block. */
 export const coarseStride = 2;
 
-/** T_r at which helium's march begins, K: Saha equilibrium still holds to 1e-5 of x_e (z = 3300 at 2.7255 K). */
-const heliumTopTemperature = 9000;
+/** T_r at which helium's march begins, K: Saha equilibrium still holds to 1e-5 of x_e (z = 3490 at 2.7255 K). */
+const heliumTopTemperature = 9500;
 
 /** Below this T_r helium carries no electrons that show; z = 1630 at 2.7255 K. */
 const heliumEndTemperature = 4440;
