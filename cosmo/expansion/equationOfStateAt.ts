@@ -3,7 +3,7 @@ import { expansionPart, type ModelEvaluation, type ModelQuantity } from "./expan
 import { requireRedshift } from "./requirePast";
 
 /**
- * Equation of state of the dark energy at a redshift: w = w0 + wa (1 - a).
+ * Equation of state of the dark energy at a redshift: w = w0 + wa (1 - a), or what the model's formula or table says.
  *
  * @param z redshift above -1. Exact. Source: Chevallier & Polarski 2001; Linder 2003, eq. 6.
  * @example equationOfStateAt(evaluation, 1) // w0 + wa/2
@@ -22,6 +22,11 @@ export const equationOfStateAtQuantity: ModelQuantity = {
   equation: String.raw`w(z) = w_0 + w_a \frac{z}{1+z}`,
   method: "closed form",
   accuracy: 1e-15,
-  sources: ["chevallierPolarski2001", "linder2003"],
+  methodFor: ({ darkEnergy }) =>
+    darkEnergy.equation !== undefined
+      ? `the model's formula, ${darkEnergy.equation.text}`
+      : darkEnergy.table && "cubic pieces in the scale factor through the model's table",
+  sources: ({ darkEnergy }) =>
+    darkEnergy.equation === undefined && darkEnergy.table === undefined ? ["chevallierPolarski2001", "linder2003"] : [],
   compute: (evaluation, [z]) => ({ value: equationOfStateAt(evaluation, z!), error: 0 }),
 };

@@ -4,6 +4,7 @@ import type { Evaluation, Part, Quantity } from "../quantity";
 import { darkEnergyGrowth } from "./darkEnergyGrowth";
 import { fermiDiracEnergy, fermiDiracPressure } from "./fermiDirac";
 import { massToTemperature } from "./neutrinoDensity";
+import { StateHistory, stateFunction } from "./stateHistory";
 
 /** An evaluation of one closed model: what every quantity of `cosmo/` is computed from. */
 export type ModelEvaluation = Evaluation<ClosedModel>;
@@ -31,7 +32,11 @@ export class Expansion {
   /** y = m c^2/(k T_nu) today, one a massive species. */
   private readonly massRatios: readonly number[];
 
-  constructor(model: ClosedModel) {
+  constructor(
+    model: ClosedModel,
+    /** Dark energy whose w follows a formula or a table. */
+    private readonly stateHistory?: StateHistory,
+  ) {
     this.baryonsAndCold = model.baryonDensity + model.coldMatterDensity;
     this.radiation = model.radiationDensity;
     this.curvatureDensity = model.curvature * model.reducedHubble ** 2;
@@ -62,7 +67,9 @@ export class Expansion {
 
   /** omega_DE f(a) a^4. */
   darkEnergyTerm(a: number): number {
-    return this.darkEnergy === 0 ? 0 : this.darkEnergy * darkEnergyGrowth(a, this.w0, this.wa) * a ** 4;
+    if (this.darkEnergy === 0) return 0;
+    if (this.stateHistory !== undefined) return this.darkEnergy * this.stateHistory.growthTerm(a);
+    return this.darkEnergy * darkEnergyGrowth(a, this.w0, this.wa) * a ** 4;
   }
 
   /** a^4 (H/100 km/s/Mpc)^2; negative where a closed model has no such a. */
@@ -82,14 +89,48 @@ export class Expansion {
 
   /** w of the dark energy at scale factor a. */
   equationOfState(a: number): number {
-    return this.w0 + this.wa * (1 - a);
+    return this.stateHistory?.state(a) ?? this.w0 + this.wa * (1 - a);
+  }
+
+  /** w as a goes to 0. */
+  earlyState(): number {
+    return this.stateHistory?.earlyState ?? this.w0 + this.wa;
+  }
+
+  /** w as a goes to infinity, where it follows a formula or a table: it is held there. */
+  lateHeldState(): number | undefined {
+    return this.stateHistory?.lateState;
   }
 }
+
+/** Dark energy by formula or table; undefined where w0 and wa say it all. */
+export const stateHistoryPart: ModelPart<StateHistory | undefined> = {
+  name: "dark energy",
+  compute: ({ model, precision }) => {
+    const w = stateFunction(model.darkEnergy, precision);
+    return w === undefined ? undefined : new StateHistory(model.darkEnergy, w);
+  },
+  approximate: (model) => model.darkEnergy.table !== undefined,
+  notes: ({ model: { darkEnergy } }) => {
+    const beyond = "followed from z = 1e8 to a = 1000 and held beyond";
+    if (darkEnergy.equation !== undefined) {
+      return [{ level: "note", text: `w = ${darkEnergy.equation.text}, ${beyond}` }];
+    }
+    if (darkEnergy.table === undefined) return [];
+    const { redshifts } = darkEnergy.table;
+    return [
+      {
+        level: "note",
+        text: `w by cubic pieces in a through a table of ${redshifts.length} redshifts from ${redshifts[0]} to ${redshifts[redshifts.length - 1]}, held at its ends; the numerical error includes what straight pieces would change`,
+      },
+    ];
+  },
+};
 
 /** The expansion of the model. */
 export const expansionPart: ModelPart<Expansion> = {
   name: "expansion",
-  compute: (evaluation) => new Expansion(evaluation.model),
+  compute: (evaluation) => new Expansion(evaluation.model, evaluation.once(stateHistoryPart)),
 };
 
 /**

@@ -1,5 +1,6 @@
 export { accelerationRedshift, accelerationRedshiftQuantity } from "./accelerationRedshift";
 export { backgroundIntegral } from "./backgroundIntegral";
+export { closeDarkEnergyFunction } from "./closeDarkEnergy";
 export { criticalDensity, criticalDensityQuantity } from "./criticalDensity";
 export { darkEnergyGrowth } from "./darkEnergyGrowth";
 export { decelerationAt, decelerationAtQuantity } from "./decelerationAt";
@@ -12,6 +13,7 @@ export {
   type ModelEvaluation,
   type ModelPart,
   type ModelQuantity,
+  stateHistoryPart,
   turningRedshiftPart,
 } from "./expansion";
 export { fermiDiracEnergy, fermiDiracPressure } from "./fermiDirac";
@@ -46,4 +48,5 @@ export { redshiftAtTemperature, redshiftAtTemperatureQuantity } from "./redshift
 export { redshiftNodesPart } from "./redshiftNodes";
 export { requireBigBang, requireFiniteStart, requireRedshift } from "./requirePast";
 export { askedValue, type Branch, type RedshiftCurve, requireAsked, solveRedshift } from "./solveRedshift";
+export { StateHistory, stateFunction } from "./stateHistory";
 export { turnaroundRedshiftPart } from "./turnaround";

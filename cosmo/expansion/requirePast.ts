@@ -54,9 +54,8 @@ export function requireFiniteStart(evaluation: ModelEvaluation, where: string, b
   requireBigBang(evaluation, where);
   const expansion = evaluation.once(expansionPart);
   if (expansion.radiation + expansion.neutrinoTerm(0) + expansion.baryonsAndCold > 0) return;
-  const { w0, wa } = evaluation.model.darkEnergy;
   const byCurvature = expansion.curvatureDensity > 0 ? 2 : Number.POSITIVE_INFINITY;
-  const byDarkEnergy = expansion.darkEnergy > 0 ? 1 - 3 * (w0 + wa) : Number.POSITIVE_INFINITY;
+  const byDarkEnergy = expansion.darkEnergy > 0 ? 1 - 3 * expansion.earlyState() : Number.POSITIVE_INFINITY;
   if (!(Math.min(byCurvature, byDarkEnergy) < below)) {
     throw new NoAnswerError({
       where,

@@ -1,5 +1,7 @@
 export type { ChebyshevOptions } from "./chebyshev";
 export { buildChebyshev, PiecewiseChebyshev } from "./chebyshev";
+export type { CumulativeIntegralOptions } from "./cumulativeIntegral";
+export { buildCumulativeIntegral, CumulativeIntegral } from "./cumulativeIntegral";
 export { curvedSine } from "./curvedSine";
 export { curvedVolume } from "./curvedVolume";
 export type { FindMinimumOptions, MinimumResult } from "./findMinimum";
@@ -17,3 +19,4 @@ export { type SolveSystemOptions, type SystemSolution, solveSystem } from "./sol
 export type { StiffOptions, StiffSystem } from "./stiff";
 export { solveStiff } from "./stiff";
 export type { StiffSolution } from "./stiffSolution";
+export { tableCurve } from "./tableCurve";

@@ -1,3 +1,4 @@
+import { NoAnswerError } from "../errors";
 import type { ModelQuantity } from "../expansion";
 import type { ClosedModel } from "../model";
 import type { SourceKey } from "../sources";
@@ -29,7 +30,8 @@ const temperatureSource = (model: ClosedModel): readonly SourceKey[] =>
 const effectiveNumberSource = (model: ClosedModel): readonly SourceKey[] =>
   model.givens.neutrinos?.effectiveNumber === undefined ? ["bennett2021", "froustey2020"] : [];
 
-const equationOfStateSource = (): readonly SourceKey[] => ["chevallierPolarski2001", "linder2003"];
+const equationOfStateSource = ({ darkEnergy }: ClosedModel): readonly SourceKey[] =>
+  darkEnergy.equation === undefined && darkEnergy.table === undefined ? ["chevallierPolarski2001", "linder2003"] : [];
 
 const modelNumbers: readonly ModelNumber[] = [
   {
@@ -185,6 +187,14 @@ const modelNumbers: readonly ModelNumber[] = [
     read: (model) => model.matterDensity * model.reducedHubble,
   },
   {
+    name: "scalarSpectralIndex",
+    symbol: "n_s",
+    unit: "",
+    description: "Spectral index of the primordial fluctuations, read by the peak fits only",
+    equation: "n_s",
+    read: (model) => model.scalarSpectralIndex,
+  },
+  {
     name: "darkEnergy.w0",
     symbol: "w_0",
     unit: "",
@@ -199,7 +209,18 @@ const modelNumbers: readonly ModelNumber[] = [
     unit: "",
     description: "Change of the equation of state with 1 - a",
     equation: "w(a) = w_0 + w_a (1-a)",
-    read: (model) => model.darkEnergy.wa,
+    read: ({ darkEnergy }) => {
+      if (darkEnergy.equation !== undefined || darkEnergy.table !== undefined) {
+        const form = darkEnergy.equation === undefined ? "a table" : "a formula";
+        const hint = "ask for equationOfStateAt(z)";
+        throw new NoAnswerError({
+          where: "darkEnergy.wa",
+          reason: `w of this model follows ${form}, it has no wa`,
+          hint,
+        });
+      }
+      return darkEnergy.wa;
+    },
     sources: equationOfStateSource,
   },
   {

@@ -1,7 +1,13 @@
 import { type ConstantsSetName, constantsSets } from "../constants";
 import { DomainError, InconsistentParametersError } from "../errors";
-import { massiveNeutrinoDensity, masslessSpeciesDensity, neutrinoTemperature } from "../expansion";
 import {
+  closeDarkEnergyFunction,
+  massiveNeutrinoDensity,
+  masslessSpeciesDensity,
+  neutrinoTemperature,
+} from "../expansion";
+import {
+  type ClosedDarkEnergy,
   type ClosedModel,
   type ClosedNeutrinos,
   type ConventionGivens,
@@ -76,18 +82,6 @@ export function closeDirect(flat: FlatGivens, givens: ModelGivens, origin: Origi
     if (Math.abs(darkEnergyFraction) < 4 * Number.EPSILON) darkEnergyFraction = 0;
   }
 
-  const w0 = pick.number("darkEnergy.w0", -1);
-  const wa = pick.number("darkEnergy.wa", 0);
-  if (!(w0 + wa < 1 / 3)) {
-    throw new DomainError({
-      where,
-      argument: "darkEnergy.w0 + darkEnergy.wa",
-      rule: "must be below 1/3, or dark energy outgrows radiation in the past",
-      value: w0 + wa,
-      place: origin.place,
-    });
-  }
-
   const heliumGiven = flat.get("helium");
   const heliumSource = typeof heliumGiven === "number" ? "given" : "nucleosynthesis";
   const helium =
@@ -113,7 +107,7 @@ export function closeDirect(flat: FlatGivens, givens: ModelGivens, origin: Origi
     radiationFraction: radiationDensity / h2,
     darkEnergyFraction,
     curvature,
-    darkEnergy: { w0, wa },
+    darkEnergy: closeDarkEnergy(pick, givens, where, origin.place),
     neutrinos,
     photonTemperature,
     helium,
@@ -125,6 +119,32 @@ export function closeDirect(flat: FlatGivens, givens: ModelGivens, origin: Origi
     conventions,
     constants,
   };
+}
+
+function closeDarkEnergy(
+  pick: Picker,
+  givens: ModelGivens,
+  where: string,
+  place: string | undefined,
+): ClosedDarkEnergy {
+  const form = pick.atMostOne(["darkEnergy.equation", "darkEnergy.table"]);
+  if (form !== undefined) {
+    const beside = ["darkEnergy.w0", "darkEnergy.wa"].find((name) => pick.has(name));
+    if (beside !== undefined) throw pick.redundant([form, beside], `${form} takes the place of ${beside}`);
+    return closeDarkEnergyFunction(givens.darkEnergy!, where, place);
+  }
+  const w0 = pick.number("darkEnergy.w0", -1);
+  const wa = pick.number("darkEnergy.wa", 0);
+  if (!(w0 + wa < 1 / 3)) {
+    throw new DomainError({
+      where,
+      argument: "darkEnergy.w0 + darkEnergy.wa",
+      rule: "must be below 1/3, or dark energy outgrows radiation in the past",
+      value: w0 + wa,
+      place,
+    });
+  }
+  return { w0, wa };
 }
 
 function closeNeutrinos(pick: Picker, photonTemperature: number, photons: number): ClosedNeutrinos {

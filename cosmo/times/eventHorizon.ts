@@ -20,7 +20,7 @@ const where = "eventHorizon";
  * d_e(z) = c int_a^inf da/(a^2 H).
  *
  * @param z redshift above -1. It is finite only where the expansion speeds up for ever: dark energy positive and wa > 0, or wa = 0
- * and w0 < -1/3. Otherwise, or where the model falls back: NoAnswerError.
+ * and w0 < -1/3; or a formula or table with w below -1/3 where it is held, from a = 1000 on. Otherwise, or where the model falls back: NoAnswerError.
  * Method: adaptive Gauss-Kronrod in ln a up to today; beyond, for wa = 0 in u = a^((1 + 3 w0)/2), which brings infinity to 0
  * with a smooth integrand, for wa > 0 in ln a until the integrand has fallen by 1e-20. Accuracy 2e-13.
  * Source: Rindler's definition; common practice, no source.
@@ -36,8 +36,9 @@ export function eventHorizon(evaluation: ModelEvaluation, z: number): NumericalR
     return a / Math.sqrt(expansion.squaredTerm(a));
   };
   const start = -Math.log1p(z);
+  // A w that follows a formula or a table is no power law on its way: only the integrand itself tells where it has fallen.
   const future =
-    wa > 0
+    wa > 0 || expansion.lateHeldState() !== undefined
       ? backgroundIntegral(where, unitHubbleDistance, perFold, Math.max(0, start), endOfFuture(perFold, start))
       : futureAtConstantState(expansion, -(1 + 3 * w0) / 2, Math.max(0, start));
   if (start >= 0) return future;
@@ -59,13 +60,14 @@ function requireHorizon(evaluation: ModelEvaluation): void {
     });
   }
   const { darkEnergy, darkEnergyDensity } = evaluation.model;
-  const { w0, wa } = darkEnergy;
+  const { wa } = darkEnergy;
+  const w0 = evaluation.once(expansionPart).lateHeldState() ?? darkEnergy.w0;
   if (!(darkEnergyDensity > 0 && (wa > 0 || (wa === 0 && w0 < -1 / 3)))) {
     const why = !(darkEnergyDensity > 0)
       ? "there is no dark energy to speed the expansion up"
       : wa < 0
         ? "with wa below 0 the dark energy fades in the far future"
-        : "with w0 at or above -1/3 the expansion never speeds up";
+        : "with w at or above -1/3 in the far future the expansion does not keep speeding up";
     throw new NoAnswerError({
       where,
       reason: `the integral to the infinite future diverges, light reaches everything in the end: ${why}`,

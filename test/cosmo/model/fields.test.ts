@@ -33,6 +33,8 @@ describe("every field of a model", () => {
       darkEnergyFraction: 0.7,
       "darkEnergy.w0": -0.9,
       "darkEnergy.wa": 0.1,
+      "darkEnergy.equation": { text: "-0.9", variable: "z", evaluate: () => -0.9 },
+      "darkEnergy.table": { redshifts: [0, 1], values: [-1, -0.9] },
       "neutrinos.effectiveNumber": 3.2,
       "neutrinos.masses": [0.1],
       "neutrinos.massSum": 0.2,
@@ -42,9 +44,13 @@ describe("every field of a model", () => {
       reionizationRedshift: 8,
       reionizationDepth: 0.06,
       recombination: "peebles",
+      scalarSpectralIndex: 0.97,
       "conventions.constants": "codata2014",
       "conventions.closure": "radiationOnTop",
       "conventions.equalityMatter": "allMatter",
+      "conventions.lastScattering": "huSugiyama1996",
+      "conventions.drag": "eisensteinHu1998",
+      "conventions.soundHorizon": "brieden2023",
     };
     const excluded: Record<string, string[]> = {
       reducedHubble: ["hubble"],
