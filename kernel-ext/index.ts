@@ -19,6 +19,9 @@ export {
   recombinationCell,
   type SoundHorizonValues,
   soundHorizonCell,
+  type TimelineEntry,
+  type TimelineValues,
+  timelineCell,
 } from "./cells";
 export {
   type CellOutputOptions,

@@ -5,3 +5,4 @@ export { type LastScatteringValues, lastScatteringCell } from "./lastScatteringC
 export { type RecombinationCellOptions, type RecombinationValues, recombinationCell } from "./recombinationCell";
 export type { RedshiftList } from "./redshiftList";
 export { type SoundHorizonValues, soundHorizonCell } from "./soundHorizonCell";
+export { type TimelineEntry, type TimelineValues, timelineCell } from "./timelineCell";
