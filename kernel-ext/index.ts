@@ -24,6 +24,7 @@ export {
   timelineCell,
 } from "./cells";
 export {
+  barChart,
   type CellOutputOptions,
   CellResult,
   type Chart,

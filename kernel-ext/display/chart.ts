@@ -1,5 +1,6 @@
 /** Contents: the charts of a cell's output. */
 export type { ChartAxis } from "./chart/axis";
+export { type BarChartOptions, type BarPanel, type BarRow, barChart, type ChartBar } from "./chart/barChart";
 export { type Chart, type VegaLiteSpec, vegaLiteMediaType } from "./chart/chart";
 export type { ChartBand, ChartRule } from "./chart/guides";
 export {

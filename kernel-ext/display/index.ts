@@ -1,9 +1,14 @@
 /** Contents of the display room. */
 export { type CellOutputOptions, CellResult, cellOutput, type SourceLine } from "./bundle";
 export {
+  type BarChartOptions,
+  type BarPanel,
+  type BarRow,
+  barChart,
   type Chart,
   type ChartAxis,
   type ChartBand,
+  type ChartBar,
   type ChartPanel,
   type ChartRule,
   type IntervalChartOptions,

@@ -1,5 +1,5 @@
 /** Charts over invented data, close in kind to what cells show: none of the numbers is a result of anything. */
-import { type Chart, intervalChart, lineChart } from "../../../../kernel-ext/display";
+import { barChart, type Chart, intervalChart, lineChart } from "../../../../kernel-ext/display";
 
 const onePlusZ = Float64Array.from({ length: 2000 }, (_, index) => 10 ** (0.02 + (3.98 * index) / 1999));
 const redshifts = onePlusZ.map((value) => value - 1);
@@ -101,4 +101,33 @@ export function beside(): Chart {
   });
 }
 
-export const sampleCharts: Readonly<Record<string, () => Chart>> = { distances, bump, fractions, measured, beside };
+/** Bars to both sides of zero for two groups, in two units. */
+export function effects(): Chart {
+  const row = (label: string, one: number, other: number) => ({
+    label,
+    bars: [
+      { group: "angle", value: one },
+      { group: "age", value: other },
+    ],
+  });
+  return barChart({
+    title: "What moves the angle and the age",
+    description: "Invented slopes of two quantities to both sides of zero, in two units.",
+    panels: [
+      {
+        axis: { label: "by the logarithm of the parameter" },
+        rows: [row("hubble H_0", 0.2, -1), row("coldMatterDensity omega_c", 0.14, -0.31), row("baryons", -0.07, 0)],
+      },
+      { axis: { label: "by the parameter itself" }, rows: [row("curvature Omega_k", -1.6, -0.43)] },
+    ],
+  });
+}
+
+export const sampleCharts: Readonly<Record<string, () => Chart>> = {
+  distances,
+  bump,
+  fractions,
+  measured,
+  beside,
+  effects,
+};
