@@ -7,6 +7,7 @@ export {
   dragSoundHorizonQuantity,
   dragSoundHorizonTimesReducedHubbleQuantity,
 } from "./dragSoundHorizon";
+export { earlyDarkEnergy } from "./earlyDarkEnergy";
 export {
   equalityHorizonAngle,
   equalityHorizonAngleQuantity,
@@ -14,6 +15,8 @@ export {
   equalitySoundAngleQuantity,
 } from "./equalityAngles";
 export { lastScatteringSoundHorizon, lastScatteringSoundHorizonQuantity } from "./lastScatteringSoundHorizon";
+export { peakHeightRatio, peakHeightRatioQuantity } from "./peakHeightRatio";
+export { peakMultipole, peakMultipoleQuantity, peakSpacing, peakSpacingQuantity } from "./peakMultipole";
 export { shiftParameter, shiftParameterQuantity } from "./shiftParameter";
 export { soundHorizon, soundHorizonQuantity } from "./soundHorizon";
 export { soundSpeed, soundSpeedQuantity } from "./soundSpeed";

@@ -61,13 +61,16 @@ function requireHorizon(evaluation: ModelEvaluation): void {
   }
   const { darkEnergy, darkEnergyDensity } = evaluation.model;
   const { wa } = darkEnergy;
-  const w0 = evaluation.once(expansionPart).lateHeldState() ?? darkEnergy.w0;
+  const held = evaluation.once(expansionPart).lateHeldState();
+  const w0 = held ?? darkEnergy.w0;
   if (!(darkEnergyDensity > 0 && (wa > 0 || (wa === 0 && w0 < -1 / 3)))) {
     const why = !(darkEnergyDensity > 0)
       ? "there is no dark energy to speed the expansion up"
       : wa < 0
         ? "with wa below 0 the dark energy fades in the far future"
-        : "with w at or above -1/3 in the far future the expansion does not keep speeding up";
+        : held === undefined
+          ? "with w0 at or above -1/3 the expansion never speeds up"
+          : "with w at or above -1/3 where it is held the expansion does not speed up for ever";
     throw new NoAnswerError({
       where,
       reason: `the integral to the infinite future diverges, light reaches everything in the end: ${why}`,

@@ -74,6 +74,8 @@ describe("darkEnergy.equation", () => {
     const steady = withState({ equation: inScale("-0.8", () => -0.8) });
     const constant = withState({ w0: -0.8 });
     expect(relative(steady.value("eventHorizon", 0), constant.value("eventHorizon", 0))).toBeLessThan(1e-11);
+    const slowing = withState({ equation: inScale("a > 100 ? -0.2 : -1", (a) => (a > 100 ? -0.2 : -1)) });
+    expect(() => slowing.value("eventHorizon", 0)).toThrow("with w at or above -1/3 where it is held the expansion");
     const expansion = steady.evaluation.once(expansionPart);
     const far = steady.model.darkEnergyDensity * darkEnergyGrowth(1e6, -0.8, 0) * 1e6 ** 4;
     expect(relative(expansion.darkEnergyTerm(1e6), far)).toBeLessThan(1e-12);

@@ -79,6 +79,9 @@ describe("closeModel(givens)", () => {
       constants: "codata2022",
       closure: "radiationInside",
       equalityMatter: "baryonsAndCold",
+      lastScattering: "full",
+      drag: "full",
+      soundHorizon: "full",
     });
   });
 
