@@ -11,8 +11,10 @@ import { promisify } from "node:util";
 import type { MessageHeader } from "./wire";
 
 export interface CellContext {
-  /** Execution count. */
-  readonly count: number;
+  /** What the user knows the cell by: "cell [3]". */
+  readonly name: string;
+  /** The name under which the virtual machine runs it; no two runs share one. */
+  readonly file: string;
   /** The request that the cell's messages answer. */
   readonly parent: MessageHeader;
   /** A silent cell publishes nothing. */

@@ -7,7 +7,7 @@ import type { Executor } from "tslab/dist/executor";
 import type { MimeBundle } from "../display/sink";
 import { type CellContext, InterruptError, runInContext } from "./cellContext";
 import { type CellError, describeDiagnostics, describeThrown } from "./cellError";
-import { CellSources, cellFileName } from "./cellSources";
+import { CellSources } from "./cellSources";
 import { prepareCompiler } from "./compiler";
 import { bundleOf } from "./mimeBundle";
 import { nextTurn } from "./ownTimers";
@@ -106,7 +106,7 @@ export class CellRunner {
           for (const compiled of this.compiler.takeCompiled()) {
             const side = converted.sideOutputs?.find((one) => one.data === compiled.output);
             if (side) this.sources.addFile(side.path, compiled, this.moduleTexts.get(side.path));
-            else if (this.run) this.sources.setCompiled(this.run.context.count, compiled);
+            else if (this.run) this.sources.setCompiled(this.run.context.file, compiled);
           }
           return converted;
         }),
@@ -122,7 +122,7 @@ export class CellRunner {
       if (!this.run || !match || typeof options !== "object") return original(code, options);
       return original(code, {
         ...options,
-        filename: cellFileName(this.run.context.count),
+        filename: this.run.context.file,
         columnOffset: -match[0].length,
       });
     };
@@ -130,7 +130,7 @@ export class CellRunner {
 
   /** Runs a cell to its end, including the display of its last value. Never rejects. */
   async execute(code: string, context: CellContext): Promise<CellOutcome> {
-    this.sources.addCell(context.count, code);
+    this.sources.addCell(context.file, context.name, code);
     const run: Run = { context, diagnostics: [], stop: () => undefined };
     this.run = run;
     Atomics.store(this.state, 0, phase.running);
@@ -167,7 +167,7 @@ export class CellRunner {
     try {
       const completed = await this.apart(run, () => this.executor.execute(code));
       if (run.diagnostics.length > 0) {
-        return { error: describeDiagnostics(run.diagnostics, `cell [${run.context.count}]`, this.sources) };
+        return { error: describeDiagnostics(run.diagnostics, run.context.name, this.sources) };
       }
       if (run.thrown) return { error: describeThrown(run.thrown.value, this.sources) };
       if (!completed) throw new Error("the cell did not complete");

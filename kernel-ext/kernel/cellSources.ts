@@ -15,13 +15,8 @@ interface KnownSource {
   text: string[] | undefined;
   /** Lines that the converter puts before the source. */
   lead: number;
-  compiled: CompiledFile | undefined;
+  locate: CompiledFile["locate"] | undefined;
   outputLines: number;
-}
-
-/** The name under which the virtual machine runs the cell with this execution count. */
-export function cellFileName(count: number): string {
-  return `cell[${count}]`;
 }
 
 /** The converter puts one line, `export {};`, before the text of a cell. */
@@ -32,22 +27,21 @@ export class CellSources {
 
   constructor(private readonly workingDirectory: string) {}
 
-  /** Remembers a cell before it is compiled. */
-  addCell(count: number, text: string): void {
-    this.known.set(cellFileName(count), {
-      name: `cell [${count}]`,
-      text: text.split("\n"),
-      lead: cellLead,
-      compiled: undefined,
-      outputLines: 0,
-    });
+  /**
+   * Remembers a cell before it is compiled.
+   *
+   * @param file the name under which the virtual machine runs it
+   * @param name what the user knows it by
+   */
+  addCell(file: string, name: string, text: string): void {
+    this.known.set(file, { name, text: text.split("\n"), lead: cellLead, locate: undefined, outputLines: 0 });
   }
 
   /** Adds what the compiler made of a cell. */
-  setCompiled(count: number, compiled: CompiledFile): void {
-    const source = this.known.get(cellFileName(count));
+  setCompiled(file: string, compiled: CompiledFile): void {
+    const source = this.known.get(file);
     if (!source) return;
-    source.compiled = compiled;
+    source.locate = compiled.locate;
     source.outputLines = compiled.output.split("\n").length;
   }
 
@@ -57,7 +51,7 @@ export class CellSources {
       name: this.shortName(path).replace(/\.js$/, ".ts"),
       text: text?.split("\n"),
       lead: text === undefined ? 0 : cellLead,
-      compiled,
+      locate: compiled.locate,
       outputLines: compiled.output.split("\n").length,
     });
   }
@@ -75,8 +69,8 @@ export class CellSources {
   locate(file: string, line: number, column: number): SourcePlace | "hidden" | undefined {
     const source = this.known.get(file);
     if (!source) return undefined;
-    if (!source.compiled || line > source.outputLines) return "hidden";
-    const place = source.compiled.locate(line - 1, column - 1);
+    if (!source.locate || line > source.outputLines) return "hidden";
+    const place = source.locate(line - 1, column - 1);
     if (!place || place.line < source.lead) return "hidden";
     return { name: source.name, line: place.line - source.lead + 1, column: place.column + 1 };
   }

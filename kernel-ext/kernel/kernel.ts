@@ -1,5 +1,4 @@
 /** The kernel behind the sockets: what each request is answered with and what is published meanwhile. */
-import { randomUUID } from "node:crypto";
 import { version as tslabVersion } from "tslab/package.json";
 import type { MimeBundle } from "../display/sink";
 import { type CellContext, currentContext, InterruptError, leaveContext } from "./cellContext";
@@ -49,7 +48,10 @@ export class Kernel {
   private readonly waiting: Waiting[] = [];
   private readonly cells: CellContext[] = [];
   private handling = false;
+  /** Execution count. */
   private count = 0;
+  /** All runs of code, also those that are not counted. */
+  private runs = 0;
   private last: CellContext | undefined;
 
   constructor(private readonly parts: KernelParts) {}
@@ -266,7 +268,7 @@ export class Kernel {
     if (stored) this.count++;
     const count = this.count;
     if (!silent) this.publish("execute_input", { code, execution_count: count }, header);
-    const outcome = await this.runCell(code, header, silent);
+    const outcome = await this.runCell(code, header, silent, stored ? `cell [${count}]` : "unnumbered cell");
     if (outcome.result && !silent) {
       this.publish("execute_result", { execution_count: count, data: outcome.result, metadata: {} }, header);
     }
@@ -285,9 +287,11 @@ export class Kernel {
     };
   }
 
-  private async runCell(code: string, parent: MessageHeader, silent: boolean): Promise<CellOutcome> {
+  private async runCell(code: string, parent: MessageHeader, silent: boolean, name: string): Promise<CellOutcome> {
+    this.runs++;
     const context: CellContext = {
-      count: this.count,
+      name,
+      file: `cell[${this.runs}]`,
       parent,
       silent,
       cancelled: false,
@@ -304,7 +308,7 @@ export class Kernel {
     const results: JsonObject = {};
     if (typeof expressions !== "object" || expressions === null) return results;
     for (const [name, expression] of Object.entries(expressions)) {
-      const { result, error } = await this.runCell(String(expression), parent, true);
+      const { result, error } = await this.runCell(String(expression), parent, true, `expression "${name}"`);
       results[name] = error
         ? { status: "error", ename: error.ename, evalue: error.evalue, traceback: error.traceback }
         : { status: "ok", data: result ?? {}, metadata: {} };
@@ -324,7 +328,7 @@ export class Kernel {
 
   /** Runs the hidden first cell; its failure is told, since every cell after it lacks the names. */
   async runPrelude(code: string): Promise<void> {
-    const { error } = await this.runCell(code, this.parts.codec.header("execute_request"), true);
+    const { error } = await this.runCell(code, this.parts.codec.header("execute_request"), true, "prelude");
     if (error) this.parts.log(`the names of the package are not available to cells: ${error.traceback.join("\n")}`);
     this.last = undefined;
   }
@@ -364,13 +368,8 @@ export class Kernel {
 
   /** Reports a failure of a cell's code that came after the cell's end, in that cell. */
   private late(thrown: unknown, context: CellContext): void {
-    const error = describeThrown(thrown, this.parts.runner.sources, `(after cell [${context.count}] had ended)`);
+    const error = describeThrown(thrown, this.parts.runner.sources, `(after ${context.name} had ended)`);
     if (!context.silent) this.publishError(error, context.parent);
-  }
-
-  /** A new id for a display. */
-  static newDisplayId(): string {
-    return randomUUID();
   }
 }
 

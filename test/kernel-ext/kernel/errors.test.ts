@@ -185,3 +185,18 @@ describe("process.exit", () => {
     expect(await session.value("1 + 1")).toBe("2");
   });
 });
+
+describe("code that is not counted", () => {
+  it("keeps its hands off the lines of counted cells", async () => {
+    const defined = await session.run("function thrower(): number {\n  throw new Error('from the definition');\n}", {
+      userExpressions: { one: "1", two: "2" },
+    });
+    await session.run("3", { silent: true });
+    await session.run("4", { storeHistory: false });
+    const run = await session.run("thrower()", { storeHistory: false });
+    const text = traceback(run);
+    expect(text).toContain(`cell [${defined.reply.execution_count}], line 2, column 9`);
+    expect(text).toContain("> 2 |   throw new Error('from the definition');");
+    expect(text).toContain("unnumbered cell, line 1, column 1");
+  });
+});
