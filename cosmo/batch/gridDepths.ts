@@ -23,7 +23,7 @@ export interface Crossing {
 
 /**
  * tau and tau_d on the grid: the same integrals as lastScattering/opticalDepthHistory.ts, with six-point weights, and a power
- * law from the last point (z = 20) to today.
+ * law from the last point (z = 8) to today.
  */
 export class GridDepths {
   /** dtau/du where crossings are looked for. */

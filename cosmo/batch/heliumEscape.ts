@@ -51,8 +51,7 @@ export function sobolevEscape(depth: number): number {
 
 /** Place in {@link continuumEscapes}: the eighth root of the singlet's g, which square roots give. @param g above 0. */
 export function continuumPlace(g: number): number {
-  const place = Math.sqrt(Math.sqrt(Math.sqrt(g))) * pointsPerRoot;
-  return place < highestRoot * pointsPerRoot ? place : highestRoot * pointsPerRoot;
+  return Math.min(Math.sqrt(Math.sqrt(Math.sqrt(g))) * pointsPerRoot, highestRoot * pointsPerRoot);
 }
 
 /**

@@ -4,7 +4,7 @@
  *
  * Two runs of points lie one after the other in the same arrays. The first, {@link heliumBlock}, has a coarse step and covers the
  * recombination of helium, while hydrogen keeps Saha equilibrium. The second begins at {@link mainTop} with the fine step, covers
- * hydrogen's, and doubles its stride three times below, where everything changes slowly. They overlap where helium's last electrons still count.
+ * hydrogen's, and doubles its stride four times below, where everything changes slowly. They overlap where helium's last electrons still count.
  */
 
 /** h in u of the fine block. */
@@ -38,12 +38,13 @@ export interface GridBlock {
   readonly stride: number;
 }
 
-/** Points of the blocks of the second run; the last ends near 50 K. */
+/** Points of the blocks of the second run; the last ends near 25 K, where a power law takes over. */
 const layout: readonly (readonly [points: number, stride: number])[] = [
   [120, 1],
   [14, 2],
   [14, 4],
-  [32, 8],
+  [20, 8],
+  [11, 16],
 ];
 
 /** Coarse steps above the top of the fine block, and points of the helium block: a few more than helium needs, to interpolate between. */
