@@ -373,12 +373,13 @@ export type SourceKey = keyof typeof bibliography;
 export const sources: Readonly<Record<SourceKey, Source>> = bibliography;
 
 /**
- * A source as one line of text.
+ * A source as one line of text; where the digits taken from it were written down from memory it says so.
  *
  * @example citation("hogg1999") // "Hogg 1999, arXiv e-print, arXiv:astro-ph/9905116"
  */
 export function citation(key: SourceKey): string {
   const source = sources[key];
   const eprint = source.eprint === undefined ? "" : `, arXiv:${source.eprint}`;
-  return `${source.authors} ${source.year}, ${source.reference}${eprint}`;
+  const memory = source.memory === true ? " (digits from memory)" : "";
+  return `${source.authors} ${source.year}, ${source.reference}${eprint}${memory}`;
 }

@@ -117,8 +117,9 @@ export function checkArguments<M>(definition: Quantity<M>, values: readonly numb
   values.forEach((value, index) => {
     const argument = definition.arguments[pair ? 0 : index]!;
     if (typeof value !== "number" || !argument.accepts(value)) {
+      const rule = typeof value === "number" ? argument.rule : "must be a number";
       const name = argument.name === "z" ? (pair ? `redshift z${index + 1}` : "redshift") : argument.name;
-      throw new DomainError({ where: definition.name, argument: name, rule: argument.rule, value, place });
+      throw new DomainError({ where: definition.name, argument: name, rule, value, place });
     }
   });
 }

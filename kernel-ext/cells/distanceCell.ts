@@ -107,7 +107,7 @@ export function distanceCell(model: ModelGivens, options: DistanceCellOptions): 
     rows,
     notes: [
       `numerical error at most ${largestRelativeError(everything).toExponential(0)} of each value`,
-      definitions.map((definition) => `${definition.symbol}: ${definition.description.toLowerCase()}`).join("; "),
+      definitions.map((definition) => `${definition.symbol}: ${definition.description}`).join("; "),
     ],
   });
   const charts = distanceChart(numbers, redshifts, columns);

@@ -90,7 +90,11 @@ function main(): void {
     // Rounded where a further digit would move z_* by less than 1e-10.
     coefficients: coefficients.map((each) => Number(each.toPrecision(12))),
   };
-  writeFileSync(file, `${JSON.stringify(content, null, 2)}\n`);
+  // Lists of numbers stand on one line, as the formatter of the house has them.
+  const text = JSON.stringify(content, null, 2).replace(/\[[^\][{}"]*\]/g, (list) =>
+    list.replace(/\s+/g, " ").replace("[ ", "[").replace(" ]", "]"),
+  );
+  writeFileSync(file, `${text}\n`);
   process.stdout.write(`coefficients ${content.coefficients.join(", ")} after ${iterations} iterations -> ${file}\n`);
 }
 

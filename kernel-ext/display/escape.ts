@@ -49,9 +49,13 @@ export function escapeHtml(text: string): string {
  * @example escapeMarkdown("z_* | r_s") // "z\\_\\* \\| r\\_s"
  */
 export function escapeMarkdown(text: string): string {
-  return visibleText(text)
-    .replace(/[\\`*_{}[\]()#+\-!|<>&$~^:"'=]/g, "\\$&")
-    .replace(/^(\d+)\./, "$1\\.");
+  return (
+    visibleText(text)
+      .replace(/[\\`*_{}[\]()#+!|<>&$~^:"']/g, "\\$&")
+      // Only at the start of a line do these mean a list or a heading.
+      .replace(/^(\s*)([-=])/, "$1\\$2")
+      .replace(/^(\s*\d+)\.(?=\s|$)/, "$1\\.")
+  );
 }
 
 /** Several lines of text with control characters made visible, line ends kept. */
