@@ -5,7 +5,7 @@ import { sahaLogarithms } from "../recombination/sahaFactors";
 import type { BatchRow } from "./batchRow";
 import type { Crossing } from "./gridDepths";
 import { edgeWeights, partialCell } from "./gridQuadrature";
-import { squaredTermAt } from "./rowExpansion";
+import { fillSquaredTerms } from "./rowExpansion";
 import { gridSize, gridStep, gridTemperatures, heliumAtMainTop, heliumBlock, mainFirst } from "./temperatureGrid";
 
 /** The point up to which the coarse block serves; the two above it are the last rule's. */
@@ -19,46 +19,50 @@ const fineJoint = mainFirst + heliumBlock.stride;
 const pieceEnds = [gridTemperatures[topPoint], 5000 * 2.7255, 6500 * 2.7255];
 const pieceNodes = [6, 7, 5];
 
-/** A node above the grid with what Saha equilibrium needs there. */
-interface HotNode {
-  readonly temperature: number;
-  readonly logTemperature: number;
+/** Nodes above the grid, with what Saha equilibrium needs there and room for a row's numbers. */
+class HotNodes {
+  readonly temperatures: Float64Array;
+  readonly logTemperatures: Float64Array;
   /** Of the integral over u. */
-  readonly weight: number;
+  readonly weights: Float64Array;
   /** n_e n(He+)/n(He) and n_e n(He++)/n(He+), 1/m3. */
-  readonly helium: number;
-  readonly heliumIon: number;
-}
+  readonly once: Float64Array;
+  readonly twice: Float64Array;
+  readonly scaleFactors: Float64Array;
+  readonly logs: Float64Array;
+  readonly terms: Float64Array;
 
-function hotNodes(constants: ConstantsSet): HotNode[] {
-  const nodes: HotNode[] = [];
-  const add = (temperature: number, weight: number) => {
-    const saha = sahaLogarithms(temperature, constants);
-    nodes.push({
-      temperature,
-      logTemperature: Math.log(temperature),
-      weight,
-      helium: Math.exp(saha.helium),
-      heliumIon: Math.exp(saha.heliumIon),
+  constructor(constants: ConstantsSet) {
+    const temperatures: number[] = [];
+    const weights: number[] = [];
+    pieceEnds.forEach((start, piece) => {
+      const rule = gaussLegendre(pieceNodes[piece]);
+      if (piece + 1 < pieceEnds.length) {
+        const low = Math.log(start);
+        const half = (Math.log(pieceEnds[piece + 1]) - low) / 2;
+        rule.nodes.forEach((x, i) => {
+          temperatures.push(Math.exp(low + half * (1 + x)));
+          weights.push(half * rule.weights[i]);
+        });
+      } else {
+        // To infinity in a, in which the integrand is a^2 times something smooth: a = a_start v, du = dv/v.
+        rule.nodes.forEach((x, i) => {
+          const v = (1 + x) / 2;
+          temperatures.push(start / v);
+          weights.push(rule.weights[i] / 2 / v);
+        });
+      }
     });
-  };
-  pieceEnds.forEach((start, piece) => {
-    const rule = gaussLegendre(pieceNodes[piece]);
-    if (piece + 1 < pieceEnds.length) {
-      const low = Math.log(start);
-      const half = (Math.log(pieceEnds[piece + 1]) - low) / 2;
-      rule.nodes.forEach((x, i) => {
-        add(Math.exp(low + half * (1 + x)), half * rule.weights[i]);
-      });
-    } else {
-      // To infinity in a, in which the integrand is a^2 times something smooth: a = a_start v, du = dv/v.
-      rule.nodes.forEach((x, i) => {
-        const v = (1 + x) / 2;
-        add(start / v, rule.weights[i] / 2 / v);
-      });
-    }
-  });
-  return nodes;
+    const count = temperatures.length;
+    this.temperatures = Float64Array.from(temperatures);
+    this.logTemperatures = this.temperatures.map(Math.log);
+    this.weights = Float64Array.from(weights);
+    this.once = this.temperatures.map((temperature) => Math.exp(sahaLogarithms(temperature, constants).helium));
+    this.twice = this.temperatures.map((temperature) => Math.exp(sahaLogarithms(temperature, constants).heliumIon));
+    this.scaleFactors = new Float64Array(count);
+    this.logs = new Float64Array(count);
+    this.terms = new Float64Array(count);
+  }
 }
 
 /**
@@ -68,10 +72,10 @@ function hotNodes(constants: ConstantsSet): HotNode[] {
 export class GridDamping {
   private readonly integrand = new Float64Array(gridSize);
   private readonly cell = new Float64Array(6);
-  private readonly nodes: readonly HotNode[];
+  private readonly nodes: HotNodes;
 
   constructor(constants: ConstantsSet) {
-    this.nodes = hotNodes(constants);
+    this.nodes = new HotNodes(constants);
   }
 
   /** 1/Mpc. @param inverseRate 100 km/s/Mpc over H on the grid; @param from z_*. */
@@ -92,10 +96,11 @@ export class GridDamping {
 
   private fill(row: BatchRow, inverseRate: Float64Array, ionized: Float64Array, first: number, end: number): void {
     const { integrand } = this;
+    const temperatures = gridTemperatures;
     const scale = 1 / row.photonTemperature;
     const loading = row.loading;
     for (let i = first; i < end; i++) {
-      const x = gridTemperatures[i] * scale;
+      const x = temperatures[i] * scale;
       const sum = x + loading;
       integrand[i] = ((loading * loading + (16 / 15) * x * sum) * inverseRate[i]) / (sum * sum * x * ionized[i]);
     }
@@ -113,28 +118,35 @@ export class GridDamping {
     return sum;
   }
 
+  /** The integral above the grid. */
   private above(row: BatchRow): number {
-    const scale = 1 / row.photonTemperature;
-    const logScale = row.logPhotonTemperature;
-    const { loading, heliumRatio: ratio } = row;
+    const { temperatures, logTemperatures, weights, once, twice, scaleFactors, logs, terms } = this.nodes;
+    const count = temperatures.length;
+    const { photonTemperature, logPhotonTemperature, loading, heliumRatio: ratio, hydrogenDensity } = row;
+    for (let k = 0; k < count; k++) {
+      scaleFactors[k] = photonTemperature / temperatures[k];
+      logs[k] = logPhotonTemperature - logTemperatures[k];
+    }
+    fillSquaredTerms(row, scaleFactors, logs, terms, 0, count);
     let sum = 0;
-    for (let k = 0; k < this.nodes.length; k++) {
-      const node = this.nodes[k];
-      const x = node.temperature * scale;
-      const density = row.hydrogenDensity * x * x * x;
-      const once = node.helium / density;
-      const twice = node.heliumIon / density;
+    for (let k = 0; k < count; k++) {
+      const a = scaleFactors[k];
+      const x = 1 / a;
+      const perDensity = (a * a * a) / hydrogenDensity;
+      const toOnce = once[k] * perDensity;
+      const toTwice = twice[k] * perDensity;
+      // Two passes from He+: helium is a tenth of the electrons, and changes by a step at a time.
       let electrons = 1 + ratio;
       for (let pass = 0; pass < 2; pass++) {
-        const first = once / electrons;
-        const second = (first * twice) / electrons;
-        electrons = 1 + (ratio * (first + 2 * second)) / (1 + first + second);
+        // Shares of He, He+ and He++ as n_e^2, n_e toOnce and toOnce toTwice.
+        const first = electrons * toOnce;
+        const second = toOnce * toTwice;
+        electrons = 1 + (ratio * (first + 2 * second)) / (electrons * electrons + first + second);
       }
-      const a = 1 / x;
-      const inverseRate = (a * a) / Math.sqrt(squaredTermAt(row, a, logScale - node.logTemperature));
       const mixed = x + loading;
       sum +=
-        (node.weight * (loading * loading + (16 / 15) * x * mixed) * inverseRate) / (mixed * mixed * x * electrons);
+        (weights[k] * a * a * (loading * loading + (16 / 15) * x * mixed)) /
+        (Math.sqrt(terms[k]) * mixed * mixed * x * electrons);
     }
     return sum;
   }

@@ -19,6 +19,7 @@ export class GridExpansion {
   fill(row: BatchRow): void {
     this.fillNeutrinos(row);
     const { inverseRate, neutrinos } = this;
+    const temperatures = gridTemperatures;
     const scale = 1 / row.photonTemperature;
     const species = row.speciesDensity;
     const radiation = row.radiationDensity;
@@ -28,7 +29,7 @@ export class GridExpansion {
     const darkEnergy = row.darkEnergyDensity;
     if (constant) {
       for (let i = 0; i < gridSize; i++) {
-        const x = gridTemperatures[i] * scale;
+        const x = temperatures[i] * scale;
         inverseRate[i] =
           1 / Math.sqrt(x * x * (x * (x * (radiation + species * neutrinos[i]) + matter) + curvature) + darkEnergy);
       }
@@ -50,7 +51,7 @@ export class GridExpansion {
         } else {
           grown *= factor;
         }
-        const x = gridTemperatures[i] * scale;
+        const x = temperatures[i] * scale;
         const s = tilt / x;
         const total =
           x * x * (x * (x * (radiation + species * neutrinos[i]) + matter) + curvature) +

@@ -1,7 +1,7 @@
 import { unitHubbleDistance, unitHubbleTime } from "../expansion";
-import { curvedSine, gaussLegendre } from "../numerics";
+import { curvedSine, gaussLegendre, type QuadratureRule } from "../numerics";
 import type { BatchRow } from "./batchRow";
-import { squaredTermAt } from "./rowExpansion";
+import { fillSquaredTerms } from "./rowExpansion";
 
 /** Nodes with their logarithms, so that a row takes none. */
 interface FixedNodes {
@@ -30,6 +30,12 @@ const late = rootNodes(20, fixedStart, 1, 0);
 const toDrag = gaussLegendre(2);
 const toFixed = gaussLegendre(4);
 
+/** Where each set of nodes begins in the arrays of a row. */
+const dragBegin = early.nodes.length;
+const fixedBegin = dragBegin + toDrag.nodes.length;
+const lateBegin = fixedBegin + toFixed.nodes.length;
+const count = lateBegin + late.nodes.length;
+
 /**
  * r_s, D_C and times of a row by Gauss-Legendre nodes that they share: the integrals of acoustics/soundHorizon.ts,
  * distances/comovingDistance.ts and times/ageAt.ts, in sqrt(a + a constant), which makes E smooth.
@@ -45,98 +51,106 @@ export class Horizons {
   private sound = 0.5;
   private light = 0.5;
   private time = 0.5;
+  private readonly nodes = new Float64Array(count);
+  private readonly logs = new Float64Array(count);
+  private readonly weights = new Float64Array(count);
+  private readonly terms = new Float64Array(count);
+
+  constructor() {
+    this.nodes.set(late.nodes, lateBegin);
+    this.logs.set(late.logs, lateBegin);
+    this.weights.set(late.weights, lateBegin);
+  }
 
   /** Everything that hangs on z_* and z_drag, and the age. @param star, @param drag scale factors there. */
   run(row: BatchRow, star: number, drag: number): void {
     const logStar = Math.log(star);
-    this.fromStart(row, star, logStar);
+    this.setEarly(star, logStar);
+    this.setShort(dragBegin, toDrag, star, drag, logStar);
+    this.setShort(fixedBegin, toFixed, star, fixedStart, logStar);
+    fillSquaredTerms(row, this.nodes, this.logs, this.terms, 0, count);
+    this.clear();
+    this.add(row, 0, dragBegin);
     const timeAtStar = this.time;
     this.lastScatteringSound = unitHubbleDistance * this.sound;
-    this.shortWay(row, star, drag, logStar, toDrag.nodes, toDrag.weights);
+    this.add(row, dragBegin, fixedBegin);
     this.dragSound = unitHubbleDistance * this.sound;
-    this.light = 0;
-    this.time = timeAtStar;
-    this.shortWay(row, star, fixedStart, logStar, toFixed.nodes, toFixed.weights);
-    this.toToday(row);
+    this.clear();
+    this.add(row, fixedBegin, count);
     this.lastScatteringDistance = transverseFrom(row, unitHubbleDistance * this.light);
-    this.age = unitHubbleTime * this.time;
+    this.age = unitHubbleTime * (timeAtStar + this.time);
   }
 
   /** The age alone. */
   runAge(row: BatchRow): void {
-    this.fromStart(row, fixedStart, Math.log(fixedStart));
-    this.toToday(row);
+    this.runEarly(row, fixedStart);
+    fillSquaredTerms(row, this.nodes, this.logs, this.terms, lateBegin, count);
+    this.add(row, lateBegin, count);
     this.age = unitHubbleTime * this.time;
   }
 
   /** r_s at a scale factor before recombination, Mpc. */
   soundHorizonAt(row: BatchRow, a: number): number {
-    this.fromStart(row, a, Math.log(a));
+    this.runEarly(row, a);
     return unitHubbleDistance * this.sound;
   }
 
   /** c eta at a scale factor before recombination, Mpc. */
   conformalTimeAt(row: BatchRow, a: number): number {
-    this.fromStart(row, a, Math.log(a));
+    this.runEarly(row, a);
     return unitHubbleDistance * this.light;
   }
 
-  /** All three from a = 0 to an end. */
-  private fromStart(row: BatchRow, end: number, logEnd: number): void {
-    const { nodes, logs, weights } = early;
-    let sound = 0;
-    let light = 0;
-    let time = 0;
-    for (let i = 0; i < nodes.length; i++) {
-      const a = end * nodes[i];
-      const part = (end * weights[i]) / Math.sqrt(squaredTermAt(row, a, logEnd + logs[i]));
-      light += part;
-      time += part * a;
-      sound += part / Math.sqrt(3 * (1 + row.loading * a));
-    }
-    this.sound = sound;
-    this.light = light;
-    this.time = time;
+  private runEarly(row: BatchRow, end: number): void {
+    this.setEarly(end, Math.log(end));
+    fillSquaredTerms(row, this.nodes, this.logs, this.terms, 0, dragBegin);
+    this.clear();
+    this.add(row, 0, dragBegin);
   }
 
-  /** Adds all three over a stretch of a that begins at z_* and is at most half as long again. */
-  private shortWay(
-    row: BatchRow,
-    star: number,
-    to: number,
-    logStar: number,
-    nodes: Float64Array,
-    weights: Float64Array,
-  ): void {
+  /** Nodes from a = 0 to an end. */
+  private setEarly(end: number, logEnd: number): void {
+    for (let i = 0; i < dragBegin; i++) {
+      this.nodes[i] = end * early.nodes[i];
+      this.logs[i] = logEnd + early.logs[i];
+      this.weights[i] = end * early.weights[i];
+    }
+  }
+
+  /** Nodes over a stretch of a that begins at z_* and is at most half as long again. */
+  private setShort(begin: number, rule: QuadratureRule, star: number, to: number, logStar: number): void {
     const half = (to - star) / 2;
-    let { sound, light, time } = this;
-    for (let i = 0; i < nodes.length; i++) {
-      const way = half * (1 + nodes[i]);
+    for (let i = 0; i < rule.nodes.length; i++) {
+      const way = half * (1 + rule.nodes[i]);
       const a = star + way;
       // ln(a/a_*) by the series of the area hyperbolic tangent: 1e-7 at a ratio of 1.5.
       const t = way / (star + a);
       const s = t * t;
-      const log = 2 * t * (1 + s * (1 / 3 + s * (1 / 5 + s * (1 / 7))));
-      const part = (half * weights[i]) / Math.sqrt(squaredTermAt(row, a, logStar + log));
-      light += part;
-      time += part * a;
-      sound += part / Math.sqrt(3 * (1 + row.loading * a));
+      this.nodes[begin + i] = a;
+      this.logs[begin + i] = logStar + 2 * t * (1 + s * (1 / 3 + s * (1 / 5 + s * (1 / 7))));
+      this.weights[begin + i] = half * rule.weights[i];
     }
-    this.sound = sound;
-    this.light = light;
-    this.time = time;
   }
 
-  /** Adds light and time from the fixed scale factor to today. */
-  private toToday(row: BatchRow): void {
-    const { nodes, logs, weights } = late;
-    let { light, time } = this;
-    for (let i = 0; i < nodes.length; i++) {
+  private clear(): void {
+    this.sound = 0;
+    this.light = 0;
+    this.time = 0;
+  }
+
+  /** Adds the nodes from `from` to before `to` to all three. */
+  private add(row: BatchRow, from: number, to: number): void {
+    const { nodes, weights, terms } = this;
+    const loading = row.loading;
+    let { sound, light, time } = this;
+    for (let i = from; i < to; i++) {
       const a = nodes[i];
-      const part = weights[i] / Math.sqrt(squaredTermAt(row, a, logs[i]));
+      const part = weights[i] / Math.sqrt(terms[i]);
       light += part;
       time += part * a;
+      sound += part / Math.sqrt(3 * (1 + loading * a));
     }
+    this.sound = sound;
     this.light = light;
     this.time = time;
   }

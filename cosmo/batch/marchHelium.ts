@@ -9,11 +9,11 @@ import { equilibriumPoints, gridStep, heliumAtMainTop, heliumBlock, heliumEnd, m
 /** Points in equilibrium before the first step: one more than the formula looks back at, for the extrapolation two steps ahead. */
 const startPoints = equilibriumPoints + 1;
 
-/** Fixed-point passes for 1 - x_p in Saha equilibrium; each gains the factor 1 - x_p, at most 0.02 where it is asked for. */
-const passes = 3;
-
-/** Saha equilibrium of hydrogen and helium on the coarse block from `from` to before `to`. */
-function fillEquilibrium(state: MarchState, row: BatchRow, from: number, to: number): void {
+/**
+ * Saha equilibrium of hydrogen and helium on the coarse block from `from` to before `to`. Each pass gains the factor 1 - x_p: 1e-9 at
+ * the top, 0.02 at the bottom.
+ */
+function fillEquilibrium(state: MarchState, row: BatchRow, from: number, to: number, passes: number): void {
   const { tables, neutral, ionized, neutralHelium, continuumPlaces } = state;
   const { hydrogen: rates, helium, hydrogenSaha } = tables;
   const density = row.hydrogenDensity / row.photonTemperature ** 3;
@@ -39,7 +39,7 @@ function fillEquilibrium(state: MarchState, row: BatchRow, from: number, to: num
 
 /** The coarse block for the tier whose helium never leaves equilibrium, and for gas without helium. */
 export function heliumInEquilibrium(state: MarchState, row: BatchRow): void {
-  fillEquilibrium(state, row, heliumBlock.first, heliumBlock.end);
+  fillEquilibrium(state, row, heliumBlock.first, heliumBlock.end, 3);
 }
 
 /**
@@ -50,7 +50,7 @@ export function marchHelium(state: MarchState, row: BatchRow, inverseRate: Float
   const { tables, neutral, ionized, neutralHelium, continuumPlaces: places, newtonSteps } = state;
   const { hydrogen: rates, helium, hydrogenSaha } = tables;
   const { first, end, stride } = heliumBlock;
-  fillEquilibrium(state, row, first, first + startPoints);
+  fillEquilibrium(state, row, first, first + startPoints, 1);
   const c1 = pastWeights[0];
   const c2 = pastWeights[1];
   const c3 = pastWeights[2];

@@ -1,6 +1,6 @@
 import { gaussLegendre } from "../numerics";
 import type { BatchRow } from "./batchRow";
-import { squaredTermAt } from "./rowExpansion";
+import { fillSquaredTerms } from "./rowExpansion";
 
 /** Widest panel in ln(1+z) and the nodes in it: 1e-10 for smooth dark energy. */
 const widest = 0.5;
@@ -19,7 +19,9 @@ export class RedshiftLadder {
   /** a^4 (H/100)^2. */
   readonly squaredTerm: Float64Array;
   private readonly scaleFactors: Float64Array;
+  private readonly scaleLogs: Float64Array;
   private readonly nodes: Float64Array;
+  private readonly nodeTerms: Float64Array;
   private readonly logs: Float64Array;
   private readonly weights: Float64Array;
   /** Index after the last node below each redshift. */
@@ -33,6 +35,7 @@ export class RedshiftLadder {
     this.time = new Float64Array(size);
     this.squaredTerm = new Float64Array(size);
     this.scaleFactors = Float64Array.from(this.redshifts, (z) => 1 / (1 + z));
+    this.scaleLogs = this.scaleFactors.map(Math.log);
     this.ends = new Int32Array(size);
     const logs: number[] = [];
     const weights: number[] = [];
@@ -51,6 +54,7 @@ export class RedshiftLadder {
     }
     this.logs = Float64Array.from(logs);
     this.nodes = this.logs.map((log) => Math.exp(log));
+    this.nodeTerms = new Float64Array(logs.length);
     this.weights = Float64Array.from(weights);
   }
 
@@ -60,7 +64,9 @@ export class RedshiftLadder {
   }
 
   run(row: BatchRow): void {
-    const { light, time, squaredTerm, nodes, logs, weights, ends } = this;
+    const { light, time, squaredTerm, nodes, logs, weights, nodeTerms, ends } = this;
+    fillSquaredTerms(row, nodes, logs, nodeTerms, 0, nodes.length);
+    fillSquaredTerms(row, this.scaleFactors, this.scaleLogs, squaredTerm, 0, squaredTerm.length);
     let lightSum = 0;
     let timeSum = 0;
     let node = 0;
@@ -68,13 +74,12 @@ export class RedshiftLadder {
       for (; node < ends[k]; node++) {
         const a = nodes[node];
         // dt/(a H) with a^2 H the root of the squared term, t = ln(1+z).
-        const part = (weights[node] * a) / Math.sqrt(squaredTermAt(row, a, logs[node]));
+        const part = (weights[node] * a) / Math.sqrt(nodeTerms[node]);
         lightSum += part;
         timeSum += part * a;
       }
       light[k] = lightSum;
       time[k] = timeSum;
-      squaredTerm[k] = squaredTermAt(row, this.scaleFactors[k], Math.log(this.scaleFactors[k]));
     }
   }
 }

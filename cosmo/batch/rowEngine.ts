@@ -9,7 +9,7 @@ import { GridDepths } from "./gridDepths";
 import { GridExpansion } from "./gridExpansion";
 import { Horizons } from "./horizons";
 import { RedshiftLadder } from "./redshiftLadder";
-import { squaredTermAt } from "./rowExpansion";
+import { fillSquaredTerms } from "./rowExpansion";
 import { rowStatus } from "./rowStatus";
 import { staysExpanding } from "./validatedRange";
 
@@ -32,6 +32,9 @@ export class RowEngine {
   dragRedshift = 0.5;
   dampingWavenumber = 0.5;
   private readonly allMatter: boolean;
+  private readonly scaleFactor = new Float64Array(1);
+  private readonly logScaleFactor = new Float64Array(1);
+  private readonly term = new Float64Array(1);
   private readonly closer: RowCloser;
   private readonly expansion = new GridExpansion();
   private readonly march: AtomMarch;
@@ -60,7 +63,11 @@ export class RowEngine {
 
   /** a^4 (H/100 km/s/Mpc)^2. */
   squaredTerm(a: number): number {
-    return squaredTermAt(this.row, a, Math.log(a));
+    const { scaleFactor, logScaleFactor, term } = this;
+    scaleFactor[0] = a;
+    logScaleFactor[0] = Math.log(a);
+    fillSquaredTerms(this.row, scaleFactor, logScaleFactor, term, 0, 1);
+    return term[0];
   }
 
   /** Computes a row; a status other than `engine` says why it has to take the single path. */

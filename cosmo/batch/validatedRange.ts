@@ -18,8 +18,8 @@ export const validatedRange = {
   helium: [0, 0.5],
 } as const;
 
-function within([low, high]: readonly [number, number], value: number): boolean {
-  return value >= low && value <= high;
+function within(range: readonly [number, number], value: number): boolean {
+  return value >= range[0] && value <= range[1];
 }
 
 /** Whether the engine may take a row; false for anything that is not a number. */
