@@ -4,22 +4,26 @@ import type { Readable, Writable } from "node:stream";
 import { CosmologyError } from "../../cosmo/errors";
 import {
   ClosedPipeError,
-  type OpenedFile,
   openFile,
   openStream,
   openTable,
+  readParquet,
   TableError,
+  type TableFormat,
+  type TableReader,
   type TextSink,
-  tableWriter,
+  tableOutput,
   wholeFile,
 } from "../data";
 import { CommandError } from "./commandError";
-import { planColumns } from "./derive/columns";
+import { type ColumnPlan, planColumns } from "./derive/columns";
 import { NoteCounter } from "./derive/noteCounter";
 import { type DeriveOptions, parseOptions } from "./derive/options";
+import { type FastPlan, planFast } from "./derive/planFast";
 import { RateLine } from "./derive/rateLine";
 import { RowDeriver } from "./derive/rowDeriver";
-import { runRows } from "./derive/runRows";
+import { runFast } from "./derive/runFast";
+import { type RowCount, type RowWork, runRows } from "./derive/runRows";
 import { deriveUsage } from "./derive/usage";
 
 export { deriveUsage };
@@ -84,21 +88,12 @@ async function step<T>(code: 1 | 2, work: () => T | Promise<T>): Promise<T> {
 
 async function derive(args: readonly string[], streams: CommandStreams, say: (text: string) => void): Promise<void> {
   const options = await step(2, () => parseOptions(args));
-  const source: OpenedFile = await step(2, () => {
-    refuseSamePlace(options);
-    return options.input === "-" ? { bytes: streams.stdin, length: undefined } : openFile(options.input);
-  });
   const name = options.input === "-" ? "standard input" : options.input;
-  let bytesRead = 0;
-  async function* counted(): AsyncGenerator<Uint8Array> {
-    for await (const piece of source.bytes) {
-      bytesRead += piece.length;
-      yield piece;
-    }
-  }
-  const table = await step(1, () => openTable(counted(), name, options.inputFormat));
+  const { table, share } = await openSource(options, streams, name);
   const plan = await step(2, () => planColumns(table.columns, options));
-  for (const warning of plan.warnings) say(`derive ${name}: ${warning}`);
+  const tell = (text: string): void => say(`derive ${name}: ${text}`);
+  for (const warning of plan.warnings) tell(warning);
+  const fast = await step(2, () => fastPlan(plan, options, tell));
 
   const sink = await step(2, () =>
     options.output === "-" ? openStream(streams.stdout, "standard output") : wholeFile(options.output),
@@ -107,20 +102,25 @@ async function derive(args: readonly string[], streams: CommandStreams, say: (te
   const rateLine = (options.progress ?? streams.stderr.isTTY === true) ? new RateLine(streams.stderr) : undefined;
   const notes = new NoteCounter();
   const deriver = new RowDeriver(plan, options, `derive ${name}`, (column, row, note) => notes.add(column, row, note));
-  const typed = options.outputFormat === "jsonl" && options.inputFormat !== "jsonl";
+  const typed = options.outputFormat === "jsonl" && isText(options.inputFormat);
   try {
     const { rows, bad } = await step(1, async () => {
-      const count = await runRows({
+      const work: RowWork = {
         table,
-        writer: tableWriter(options.outputFormat, plan.columns, plan.added),
-        sink,
-        header: options.header,
+        output: await tableOutput({
+          format: options.outputFormat,
+          columns: plan.columns,
+          added: plan.added,
+          sink,
+          header: options.header,
+          textColumns: new Set([options.problemColumn, ...wordColumns(plan)]),
+        }),
         derive: (row) => deriver.derive(row),
         outgoing: (row) => (typed ? deriver.typedCells(row) : row.cells),
         keepWith: options.keepBadRows ? plan.added.length : undefined,
-        onProgress: (done) =>
-          rateLine?.update(done, source.length === undefined ? undefined : bytesRead / source.length),
-      });
+        onProgress: (done) => rateLine?.update(done, share(done)),
+      };
+      const count = await (fast === undefined ? runRows(work) : throughEngine(work, fast, options, tell));
       await sink.finish();
       return count;
     });
@@ -140,6 +140,71 @@ async function derive(args: readonly string[], streams: CommandStreams, say: (te
   } finally {
     stopListening();
   }
+}
+
+/** Opens the table, and what tells how much of it is read, 0 to 1, where its length is known. */
+async function openSource(
+  options: DeriveOptions,
+  streams: CommandStreams,
+  name: string,
+): Promise<{ table: TableReader; share: (rows: number) => number | undefined }> {
+  await step(2, () => refuseSamePlace(options));
+  if (options.inputFormat === "parquet") {
+    // That the file is there is the command's affair, what it holds the file's.
+    for await (const _ of (await step(2, () => openFile(options.input))).bytes) break;
+    const table = await step(1, () => readParquet(options.input));
+    return { table, share: (rows) => rows / table.rows };
+  }
+  const source = await step(2, () =>
+    options.input === "-" ? { bytes: streams.stdin, length: undefined } : openFile(options.input),
+  );
+  let bytesRead = 0;
+  async function* counted(): AsyncGenerator<Uint8Array> {
+    for await (const piece of source.bytes) {
+      bytesRead += piece.length;
+      yield piece;
+    }
+  }
+  const table = await step(1, () => openTable(counted(), name, options.inputFormat));
+  return { table, share: () => (source.length === undefined ? undefined : bytesRead / source.length) };
+}
+
+function isText(format: TableFormat): boolean {
+  return format === "csv" || format === "tsv";
+}
+
+/** Columns of the file whose cells are words or lists. */
+function wordColumns(plan: ColumnPlan): string[] {
+  return plan.givens.filter(({ given }) => given.kind !== "number").map(({ column }) => column);
+}
+
+/** The plan of the fast path where it was asked for and can be had; says which path the rows take. */
+function fastPlan(plan: ColumnPlan, options: DeriveOptions, tell: (text: string) => void): FastPlan | undefined {
+  if (!options.fast) return undefined;
+  const fast = planFast(plan, options);
+  if ("reason" in fast) {
+    tell(`--fast cannot be used: ${fast.reason}; all rows take the full computation`);
+    return undefined;
+  }
+  const solved = fast.request.hubbleFrom === undefined ? "" : `; H0 is solved for from ${fast.request.hubbleFrom}`;
+  tell(`batch engine, accuracy 1e-6 or better${solved}`);
+  return fast;
+}
+
+async function throughEngine(
+  work: RowWork,
+  plan: FastPlan,
+  options: DeriveOptions,
+  tell: (text: string) => void,
+): Promise<RowCount> {
+  const { fill, digits, workers } = options;
+  const count = await runFast({ ...work, plan, fill, digits, workers, typed: !isText(options.inputFormat) });
+  if (count.full > 0) {
+    tell(
+      `${count.full} of ${count.rows} rows took the full computation: outside the batch engine's range, or no plain numbers`,
+    );
+  }
+  return count;
 }
 
 /** Reading a file while its new content takes its place would work, and would lose the old content unasked. */

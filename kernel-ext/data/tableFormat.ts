@@ -1,16 +1,17 @@
 import { TableError } from "./tableError";
 
-/** The formats of table files: comma separated, tab separated, one JSON object a line. */
-export type TableFormat = "csv" | "tsv" | "jsonl";
+/** The formats of table files: comma separated, tab separated, one JSON object a line, Apache Parquet. */
+export type TableFormat = "csv" | "tsv" | "jsonl" | "parquet";
 
 const formatByEnding: ReadonlyMap<string, TableFormat> = new Map([
   [".csv", "csv"],
   [".tsv", "tsv"],
   [".jsonl", "jsonl"],
+  [".parquet", "parquet"],
 ]);
 
 /** The formats that are known, as an error or a help text lists them. */
-export const knownFormats = "csv (comma separated), tsv (tab separated), jsonl (one JSON object a line)";
+export const knownFormats = "csv (comma separated), tsv (tab separated), jsonl (one JSON object a line), parquet";
 
 /** A format by its own name: "csv". */
 export function formatByName(name: string): TableFormat | undefined {

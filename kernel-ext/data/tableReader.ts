@@ -1,6 +1,6 @@
 import { readDelimited } from "./readDelimited";
 import { readJsonLines } from "./readJsonLines";
-import type { RowProblem } from "./tableError";
+import { type RowProblem, TableError } from "./tableError";
 import type { TableFormat } from "./tableFormat";
 
 /**
@@ -47,5 +47,7 @@ export const longestRow = 4 * 1024 * 1024;
  * @example const table = await openTable(createReadStream("models.csv"), "models.csv", "csv");
  */
 export function openTable(bytes: AsyncIterable<Uint8Array>, file: string, format: TableFormat): Promise<TableReader> {
+  // Its table of contents stands at the end: see readParquet.
+  if (format === "parquet") throw new TableError({ file, reason: "cannot be read as a stream, because it is Parquet" });
   return format === "jsonl" ? readJsonLines(bytes, file) : readDelimited(bytes, file, format);
 }

@@ -19,7 +19,11 @@ export interface TableWriter {
  *
  * @param columns those that were read; @param added those behind them
  */
-export function tableWriter(format: TableFormat, columns: readonly string[], added: readonly string[]): TableWriter {
+export function tableWriter(
+  format: Exclude<TableFormat, "parquet">,
+  columns: readonly string[],
+  added: readonly string[],
+): TableWriter {
   return format === "jsonl" ? jsonLinesWriter(columns, added) : delimitedWriter(format, columns, added);
 }
 
@@ -42,7 +46,20 @@ function delimitedWriter(format: "csv" | "tsv", columns: readonly string[], adde
     // Unquoted, a row that begins with # would be read as a comment.
     quotes: (value: unknown, column: number) => column === 0 && typeof value === "string" && value.startsWith("#"),
   };
-  const line = (cells: readonly CellValue[]) => `${unparse([cells.map(delimitedCell)], settings)}\n`;
+  const special = format === "csv" ? /[\r\n"\ufeff,]|^[ #]| $/ : /[\r\n"\ufeff\t]|^[ #]| $/;
+  const line = (cells: readonly CellValue[]): string => {
+    let text = "";
+    for (let index = 0; index < cells.length; index++) {
+      const cell = cells[index];
+      const piece = typeof cell === "number" ? numberText(cell) : delimitedCell(cell);
+      // Where a cell may need quotes, papaparse settles the whole line.
+      if (piece !== null && typeof cell !== "number" && special.test(piece)) {
+        return `${unparse([cells.map(delimitedCell)], settings)}\n`;
+      }
+      text += index === 0 ? (piece ?? "") : `${settings.delimiter}${piece ?? ""}`;
+    }
+    return `${text}\n`;
+  };
   return { header: () => line([...columns, ...added]), row: (row, more) => line([...row.cells, ...more]) };
 }
 

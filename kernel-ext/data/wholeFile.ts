@@ -6,10 +6,10 @@ import { basename, dirname, join } from "node:path";
 import type { Writable } from "node:stream";
 import { TableError } from "./tableError";
 
-/** Where the text of a table goes, piece by piece. */
+/** Where the text or the bytes of a table go, piece by piece. */
 export interface TextSink {
   /** Resolves when more is welcome. */
-  write(text: string): Promise<void>;
+  write(piece: string | Uint8Array): Promise<void>;
   /** Everything is written: makes it last. */
   finish(): Promise<void>;
   /** The work has failed: leaves nothing behind. Synchronous, so that a signal's handler can call it. */
@@ -85,9 +85,9 @@ function streamSink(stream: Writable | WriteStream, name: string): Pick<TextSink
     throw new TableError({ file: name, reason: `cannot be written: ${fileReason(failure)}` });
   };
   return {
-    async write(text) {
+    async write(piece) {
       check();
-      if (stream.write(text)) return;
+      if (piece.length === 0 || stream.write(piece)) return;
       if (failure === undefined) {
         await new Promise<void>((resolve) => {
           wake = resolve;

@@ -1,8 +1,9 @@
 import { DomainError, describeValue, UnknownNameError } from "../../../cosmo/errors";
 import { modelFieldByName, validateGivens } from "../../../cosmo/model";
+import { compileModel } from "../../cells/compileModel";
 import { CommandError } from "../commandError";
 import { findGiven, givenNames } from "./givenNames";
-import { type FlatValues, nestGivens, valueOfText } from "./givensOfRow";
+import { type FlatValues, type GivenValue, nestGivens, valueOfText } from "./givensOfRow";
 import { splitPairs } from "./pairs";
 
 /** What --set and --recombination give, by the name in the vocabulary. */
@@ -16,7 +17,7 @@ export type FillValues = FlatValues;
 export function parseFill(lists: readonly string[], recombination: string | undefined): FillValues {
   const pairs = splitPairs(lists, "set", "neutrinos.effectiveNumber=3.046");
   if (recombination !== undefined) pairs.push({ name: "recombination", value: recombination });
-  const values = new Map<string, number | string | readonly number[]>();
+  const values = new Map<string, GivenValue>();
   const where = "derive --set";
   for (const { name, value } of pairs) {
     const given = findGiven(name);
@@ -34,6 +35,7 @@ export function parseFill(lists: readonly string[], recombination: string | unde
     values.set(name, parsed.value);
   }
   // A derived number has no rule beyond being finite until the model is solved for it.
-  validateGivens(nestGivens(new Map([...values].filter(([name]) => modelFieldByName.has(name)))), where);
+  const fields = new Map([...values].filter(([name]) => modelFieldByName.has(name)));
+  validateGivens(compileModel(nestGivens(fields), where), where);
   return values;
 }

@@ -1,17 +1,22 @@
-import type { ModelGivens } from "../../../cosmo/model";
+import type { DarkEnergyTable, ModelGivens } from "../../../cosmo/model";
 import { type CellValue, parseNumber } from "../../data";
 import type { Given } from "./givenNames";
 
 /** Values of givens by their flat names. */
-export type FlatValues = ReadonlyMap<string, number | string | readonly number[]>;
+export type FlatValues = ReadonlyMap<string, GivenValue>;
+
+/** A number, a word or formula, a list, or a table of the equation of state. */
+export type GivenValue = number | string | readonly number[] | DarkEnergyTable;
 
 /** A given's value, or the clause that says why the cell holds none. */
-export type FieldValue = { readonly value: number | string | readonly number[] } | { readonly reason: string };
+export type FieldValue = { readonly value: GivenValue } | { readonly reason: string };
 
-/** The value of a given as text writes it: a number, a list such as 0.06;0, or a word. */
+/** The value of a given as text writes it: a number, a list such as 0.06;0, a word, or a formula. */
 export function valueOfText(given: Given, text: string): FieldValue {
   const trimmed = text.trim();
-  if (given.kind === "choice") return { value: trimmed };
+  if (given.kind === "choice" || given.kind === "equation") return { value: trimmed };
+  if (given.kind === "table")
+    return { reason: "must be an object with lists redshifts and values, as JSON lines hold it" };
   if (given.kind === "numberOrChoice" && /^[a-z]{4,}$/i.test(trimmed)) return { value: trimmed };
   if (given.kind !== "numberList") return parseNumber(trimmed);
   const numbers: number[] = [];
@@ -28,8 +33,14 @@ export function valueOfCell(given: Given, cell: Exclude<CellValue, null | undefi
   if (typeof cell === "string") {
     const parsed = valueOfText(given, cell);
     const word = "value" in parsed && typeof parsed.value === "string";
-    return typed && !word && given.kind !== "numberList" ? { reason: "must be a number" } : parsed;
+    const textual = word || given.kind === "numberList" || given.kind === "table";
+    return typed && !textual ? { reason: "must be a number" } : parsed;
   }
+  if (given.kind === "table" && typeof cell === "object") {
+    // What is in it is checked where the model is.
+    return { value: cell as unknown as DarkEnergyTable };
+  }
+  if (given.kind === "equation" || given.kind === "table") return { reason: given.field!.rule };
   if (typeof cell === "number") return finite(cell);
   if (Array.isArray(cell) && given.kind === "numberList") {
     if (!cell.every((each) => typeof each === "number")) return { reason: "must be a list of numbers" };

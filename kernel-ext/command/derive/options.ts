@@ -27,6 +27,10 @@ export interface DeriveOptions {
   readonly solveNear: ReadonlyMap<string, number>;
   readonly digits: number;
   readonly errors: boolean;
+  /** The batch engine instead of the full computation. */
+  readonly fast: boolean;
+  /** Worker threads of the batch engine; undefined: one a core. */
+  readonly workers: number | undefined;
   readonly keepBadRows: boolean;
   readonly problemColumn: string;
   readonly header: boolean;
@@ -48,6 +52,8 @@ const options = {
   "solve-near": textOption,
   digits: textOption,
   errors: flagOption,
+  fast: flagOption,
+  workers: textOption,
   "bad-rows": textOption,
   "problem-column": textOption,
   header: textOption,
@@ -81,12 +87,24 @@ export function parseOptions(args: readonly string[]): DeriveOptions {
   }
   const inputFormat = input === "-" ? (format ?? "csv") : formatOfFile(input);
   const outputFormat = output === "-" ? (format ?? inputFormat) : formatOfFile(output);
+  if (input === "-" && inputFormat === "parquet") {
+    throw new CommandError(
+      "derive: Parquet cannot be read from standard input, because its table of contents stands at the end; name a file",
+    );
+  }
 
   const add = texts.get("add")?.join(", ");
   if (add === undefined) throw new CommandError('derive: say what to add: --add "age, luminosityDistance(1.1)"');
   const requests = parseRequests(add, "derive --add");
   if (requests.length === 0) throw new CommandError("derive: --add names no quantity");
 
+  const fast = flags.has("fast");
+  if (fast && flags.has("errors")) {
+    throw new CommandError(
+      "derive: --errors and --fast do not go together: the batch engine estimates no errors of single numbers",
+    );
+  }
+  if (!fast && texts.has("workers")) throw new CommandError("derive: --workers is for --fast");
   return {
     input,
     inputFormat,
@@ -98,8 +116,10 @@ export function parseOptions(args: readonly string[]): DeriveOptions {
     given: namesOf(texts.get("given")),
     solveFor: parameterNames(namesOf(texts.get("solve-for")), "solve-for"),
     solveNear: parseNear(texts.get("solve-near") ?? []),
-    digits: digitsOption(one("digits")),
+    digits: digitsOption(one("digits"), fast),
     errors: flags.has("errors"),
+    fast,
+    workers: workersOption(one("workers")),
     keepBadRows: oneOf("bad-rows", one("bad-rows") ?? "refuse", ["refuse", "keep"]) === "keep",
     problemColumn: one("problem-column") ?? "problem",
     header: oneOf("header", one("header") ?? "yes", ["yes", "no"]) === "yes",
@@ -157,8 +177,17 @@ function chosenFormat(name: string | undefined): TableFormat | undefined {
   return format;
 }
 
-function digitsOption(text: string | undefined): number {
-  if (text === undefined) return 15;
+function workersOption(text: string | undefined): number | undefined {
+  if (text === undefined) return undefined;
+  const count = /^\d{1,3}$/.test(text) ? Number(text) : -1;
+  if (!(count >= 0 && count <= 256)) {
+    throw new CommandError(`derive: --workers must be a whole number from 0 to 256, got ${describeValue(text)}`);
+  }
+  return count;
+}
+
+function digitsOption(text: string | undefined, fast: boolean): number {
+  if (text === undefined) return fast ? 9 : 15;
   const digits = /^\d{1,2}$/.test(text) ? Number(text) : 0;
   if (!(digits >= 1 && digits <= 17)) {
     throw new CommandError(`derive: --digits must be a whole number from 1 to 17, got ${describeValue(text)}`);

@@ -1,9 +1,9 @@
 import { CosmologyError, DataRowError } from "../../../cosmo/errors";
 import { type ModelGivens, modelFields } from "../../../cosmo/model";
 import { findQuantity } from "../../../cosmo/quantities";
-import { Evaluation, evaluateQuantity, type ValidityNote } from "../../../cosmo/quantity";
-import { computeQuantity } from "../../../cosmo/quantity/quantity";
+import { computeWithNotes, Evaluation, evaluateQuantity, type ValidityNote } from "../../../cosmo/quantity";
 import { closeModel } from "../../../cosmo/solve";
+import { compileModel } from "../../cells/compileModel";
 import { type CellValue, roundDigits, type TableRow } from "../../data";
 import type { ColumnPlan } from "./columns";
 import { findGiven, type Given } from "./givenNames";
@@ -50,7 +50,7 @@ export class RowDeriver {
     const givens = this.givens(row);
     let asked: string | undefined;
     try {
-      const evaluation = new Evaluation(closeModel(givens, { where: this.where }));
+      const evaluation = new Evaluation(closeModel(compileModel(givens, this.where), { where: this.where }));
       const cells: CellValue[] = [];
       for (const { text, values, definition } of this.requests) {
         asked = text;
@@ -59,8 +59,9 @@ export class RowDeriver {
           cells.push(roundDigits(value, this.options.digits), roundDigits(error, errorDigits));
           this.tell(text, row.number, notes);
         } else {
-          cells.push(roundDigits(computeQuantity(definition, evaluation, values), this.options.digits));
-          if (definition.notes !== undefined) this.tell(text, row.number, definition.notes(evaluation, values));
+          const { value, notes } = computeWithNotes(definition, evaluation, values);
+          cells.push(roundDigits(value, this.options.digits));
+          this.tell(text, row.number, notes);
         }
       }
       return cells;
@@ -87,7 +88,7 @@ export class RowDeriver {
   }
 
   private givens(row: TableRow): ModelGivens {
-    const typed = this.options.inputFormat === "jsonl";
+    const typed = this.options.inputFormat === "jsonl" || this.options.inputFormat === "parquet";
     const values = new Map(this.options.fill);
     const seen = new Set<string>();
     const take = (given: Given, column: string, cell: CellValue): void => {

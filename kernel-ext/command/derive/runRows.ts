@@ -1,15 +1,12 @@
 import { setImmediate as nextTurn } from "node:timers/promises";
 import { DataRowError } from "../../../cosmo/errors";
-import type { CellValue, TableReader, TableRow, TableWriter, TextSink } from "../../data";
+import type { CellValue, TableOutput, TableReader, TableRow } from "../../data";
 import { problemText } from "./rowFault";
 
 /** What {@link runRows} works with. */
 export interface RowWork {
   readonly table: TableReader;
-  readonly writer: TableWriter;
-  readonly sink: TextSink;
-  /** Whether the output begins with a header. */
-  readonly header: boolean;
+  readonly output: TableOutput;
   /** The added cells of a row, without the problem column; throws DataRowError for a bad row. */
   readonly derive: (row: TableRow) => CellValue[];
   /** The cells that were read, as the output wants them. */
@@ -29,12 +26,11 @@ export interface RowCount {
 const breath = 50;
 
 /**
- * Runs all rows in order and writes them; memory does not grow with their number. Does not finish the sink.
+ * Runs all rows in order and writes them; memory does not grow with their number. Does not finish the sink of the output.
  *
  * @throws DataRowError at the first bad row where bad rows are refused, after the rows before it have been written
  */
 export async function runRows(work: RowWork): Promise<RowCount> {
-  let text = work.header ? work.writer.header() : "";
   let rows = 0;
   let bad = 0;
   let breathedAt = performance.now();
@@ -47,24 +43,23 @@ export async function runRows(work: RowWork): Promise<RowCount> {
       } catch (error) {
         if (!(error instanceof DataRowError)) throw error;
         if (work.keepWith === undefined) {
-          await work.sink.write(text);
+          await work.output.flush();
           throw error;
         }
         bad++;
         added = new Array<CellValue>(work.keepWith - 1).fill(null);
         added.push(problemText(error));
       }
-      text += work.writer.row({ ...row, cells: work.outgoing(row) }, added);
+      work.output.row({ ...row, cells: work.outgoing(row) }, added);
       rows++;
       if (performance.now() - breathedAt > breath) {
-        await work.sink.write(text);
-        text = "";
+        await work.output.flush();
         work.onProgress(rows);
         await nextTurn();
         breathedAt = performance.now();
       }
     }
   }
-  await work.sink.write(text);
+  await work.output.end();
   return { rows, bad };
 }

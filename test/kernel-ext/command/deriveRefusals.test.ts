@@ -347,17 +347,17 @@ const wrongCommands: Wrong[] = [
     name: "an unknown format",
     args: ["-", "--add", "age", "--format", "xlsx"],
     message:
-      "derive: --format must be one of csv (comma separated), tsv (tab separated), jsonl (one JSON object a line)",
+      "derive: --format must be one of csv (comma separated), tsv (tab separated), jsonl (one JSON object a line), parquet",
   },
   {
     name: "a wrong end of the name",
     args: ["models.txt", "--add", "age"],
-    message: 'derive models.txt: the name must end in .csv, .tsv, .jsonl, and it ends in ".txt"',
+    message: 'derive models.txt: the name must end in .csv, .tsv, .jsonl, .parquet, and it ends in ".txt"',
   },
   {
     name: "a wrong end of the output's name",
     args: ["-", "--add", "age", "--out", "derived"],
-    message: "derive derived: the name must end in .csv, .tsv, .jsonl, and it ends in none of them",
+    message: "derive derived: the name must end in .csv, .tsv, .jsonl, .parquet, and it ends in none of them",
   },
   {
     name: "a file that is not there",

@@ -112,10 +112,10 @@ describe("formatOfFile", () => {
 
   it("names the known ends for another one or none", () => {
     expect(() => formatOfFile("a.txt")).toThrow(
-      'a.txt: the name must end in .csv, .tsv, .jsonl, and it ends in ".txt"',
+      'a.txt: the name must end in .csv, .tsv, .jsonl, .parquet, and it ends in ".txt"',
     );
     expect(() => formatOfFile("a.b/models")).toThrow(
-      "a.b/models: the name must end in .csv, .tsv, .jsonl, and it ends in none of them",
+      "a.b/models: the name must end in .csv, .tsv, .jsonl, .parquet, and it ends in none of them",
     );
   });
 });
