@@ -4,5 +4,11 @@ export { type ExpansionCellOptions, type ExpansionValues, expansionCell } from "
 export { type LastScatteringValues, lastScatteringCell } from "./lastScatteringCell";
 export { type RecombinationCellOptions, type RecombinationValues, recombinationCell } from "./recombinationCell";
 export type { RedshiftList } from "./redshiftList";
+export {
+  type SensitivityCellOptions,
+  type SensitivityMatrix,
+  type SensitivityValues,
+  sensitivityCell,
+} from "./sensitivityCell";
 export { type SoundHorizonValues, soundHorizonCell } from "./soundHorizonCell";
 export { type TimelineEntry, type TimelineValues, timelineCell } from "./timelineCell";

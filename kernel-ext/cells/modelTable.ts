@@ -7,7 +7,6 @@ import { formatNumber, type Table, type TableRow, table } from "../display";
  * @param tiers the recombination tiers that the cell ran, where it ran several.
  */
 export function modelTable(model: ClosedModel, tiers: readonly string[] = [model.recombination]): Table {
-  const { w0, wa } = model.darkEnergy;
   const masses = model.neutrinos.masses.length === 0 ? "0" : model.neutrinos.masses.map(exact).join(", ");
   const rows: TableRow[] = [
     { field: "hubble", symbol: "H_0", value: exact(model.hubble), unit: "km/s/Mpc" },
@@ -16,8 +15,7 @@ export function modelTable(model: ClosedModel, tiers: readonly string[] = [model
     { field: "matterFraction", symbol: "Omega_m", value: exact(model.matterFraction), unit: "" },
     { field: "darkEnergyFraction", symbol: "Omega_DE", value: exact(model.darkEnergyFraction), unit: "" },
     { field: "curvature", symbol: "Omega_k", value: exact(model.curvature), unit: "" },
-    { field: "darkEnergy.w0", symbol: "w_0", value: exact(w0), unit: "" },
-    { field: "darkEnergy.wa", symbol: "w_a", value: exact(wa), unit: "" },
+    ...equationOfState(model),
     { field: "neutrinos.effectiveNumber", symbol: "N_eff", value: exact(model.neutrinos.effectiveNumber), unit: "" },
     { field: "neutrinos.masses", symbol: "m_nu", value: masses, unit: "eV" },
     { field: "photonTemperature", symbol: "T_cmb", value: exact(model.photonTemperature), unit: "K" },
@@ -37,6 +35,20 @@ export function modelTable(model: ClosedModel, tiers: readonly string[] = [model
       `conventions: constants ${model.conventions.constants}, closure ${model.conventions.closure}, equalityMatter ${model.conventions.equalityMatter}, recombination ${tiers.join(", ")}`,
     ],
   });
+}
+
+/** w0 and wa, or the formula or table that stands in their place. */
+function equationOfState({ darkEnergy: { w0, wa, equation, table: points } }: ClosedModel): TableRow[] {
+  if (equation !== undefined) return [{ field: "darkEnergy.equation", symbol: "w", value: equation.text, unit: "" }];
+  if (points !== undefined) {
+    const [first, last] = [points.redshifts[0]!, points.redshifts.at(-1)!];
+    const value = `${points.redshifts.length} points, z ${exact(first)} to ${exact(last)}`;
+    return [{ field: "darkEnergy.table", symbol: "w", value, unit: "" }];
+  }
+  return [
+    { field: "darkEnergy.w0", symbol: "w_0", value: exact(w0), unit: "" },
+    { field: "darkEnergy.wa", symbol: "w_a", value: exact(wa), unit: "" },
+  ];
 }
 
 /** Givens at the digits they were given with, derived ones at eight. */
