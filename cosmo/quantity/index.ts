@@ -3,12 +3,12 @@ export {
   type Computed,
   checkArguments,
   computeQuantity,
+  computeWithNotes,
   evaluateQuantity,
   pastRedshiftArgument,
   type Quantity,
   type QuantityArgument,
   type QuantityValue,
-  quantityNotes,
   redshiftArgument,
   type Uncertainty,
 } from "./quantity";

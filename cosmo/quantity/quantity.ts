@@ -193,16 +193,17 @@ export function evaluateQuantity<M>(
 }
 
 /**
- * The notes of a quantity by itself: its own, and those of the parts that its computation uses. For rows, where the value comes
- * from {@link computeQuantity}.
+ * A quantity's value as {@link computeQuantity} gives it, with the notes that {@link evaluateQuantity} would: its own, and those of
+ * the parts that its computation uses.
  */
-export function quantityNotes<M>(
+export function computeWithNotes<M>(
   definition: Quantity<M>,
   evaluation: Evaluation<M>,
   values: readonly number[] = [],
-): readonly ValidityNote[] {
-  const { parts } = evaluation.watch(() => definition.compute(evaluation, values));
-  return joinNotes(definition, evaluation, values, parts);
+  place?: string,
+): { readonly value: number; readonly notes: readonly ValidityNote[] } {
+  const { value: computed, parts } = evaluation.watch(() => finiteResult(definition, evaluation, values, place));
+  return { value: computed.value, notes: joinNotes(definition, evaluation, values, parts) };
 }
 
 function joinNotes<M>(

@@ -78,7 +78,8 @@ export class RowDeriver {
       const cell = cells[index];
       if (typeof cell !== "string") continue;
       const parsed = valueOfCell(given, cell, false);
-      if ("value" in parsed) cells[index] = parsed.value;
+      // Text is never a table.
+      if ("value" in parsed) cells[index] = parsed.value as CellValue;
     }
     return cells;
   }

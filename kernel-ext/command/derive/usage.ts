@@ -38,7 +38,9 @@ LIST options may be given several times. In csv and tsv the first row names the 
 begin with # are comments and are not written again, a list is 0.06;0, and a name such as
 comovingDistance(0.5,1) is quoted. A model's cell that is empty is refused unless --set fills it; a
 field that a JSON line leaves out counts as not given. In JSON lines a model may also be nested:
-{"neutrinos": {"massSum": 0.1}}. Numbers are decimal, with a point; NaN and 1e400 are refused.
+{"neutrinos": {"massSum": 0.1}}. darkEnergy.equation holds a formula in z or in a, such as
+-1 + 0.1 z/(1 + z); darkEnergy.table, in JSON lines, {"redshifts": [0, 1], "values": [-1, -0.9]}.
+Numbers are decimal, with a point; NaN and 1e400 are refused.
 Rows keep their order, and each depends on itself alone. Standard output carries only data.
 Parquet is read from a file, not from standard input; text columns become numbers there when all their
 cells in the first 32768 rows are. With --fast a derived number can stand in place of H0, and of nothing

@@ -228,7 +228,7 @@ const brokenFiles: Broken[] = [
     name: "JSON lines: a group that is no object",
     text: '{"hubble":67.4,"baryonDensity":0.02,"coldMatterDensity":0.12,"darkEnergy":-1}\n',
     format: "jsonl",
-    message: 'row 1 of column "darkEnergy": must be an object with fields of w0, wa, got -1',
+    message: 'row 1 of column "darkEnergy": must be an object with fields of w0, wa, equation, table, got -1',
   },
   {
     name: "JSON lines: a field given flat and nested",
