@@ -13,6 +13,8 @@ export {
   expansionCell,
   type LastScatteringValues,
   lastScatteringCell,
+  type PeakValues,
+  peakCell,
   type RecombinationCellOptions,
   type RecombinationValues,
   type RedshiftList,

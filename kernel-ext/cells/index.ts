@@ -2,6 +2,7 @@ export { type AcousticScaleValues, acousticScaleCell } from "./acousticScaleCell
 export { type DistanceCellOptions, type DistanceValues, distanceCell } from "./distanceCell";
 export { type ExpansionCellOptions, type ExpansionValues, expansionCell } from "./expansionCell";
 export { type LastScatteringValues, lastScatteringCell } from "./lastScatteringCell";
+export { type PeakValues, peakCell } from "./peakCell";
 export { type RecombinationCellOptions, type RecombinationValues, recombinationCell } from "./recombinationCell";
 export type { RedshiftList } from "./redshiftList";
 export {
