@@ -21,11 +21,11 @@ function rootNodes(count: number, from: number, to: number, offset: number): Fix
 }
 
 /** From a = 0 to an end, in units of the end; the offset is near the equality of matter and radiation where the end is near z_*. */
-const early = rootNodes(9, 0, 1, 0.25);
+const early = rootNodes(12, 0, 1, 0.25);
 
 /** A scale factor above every z_* and z_drag of the validated range, from which the nodes to today are the same for all rows. */
 const fixedStart = 1 / 850;
-const late = rootNodes(20, fixedStart, 1, 0);
+const late = rootNodes(24, fixedStart, 1, 0);
 
 const toDrag = gaussLegendre(2);
 const toFixed = gaussLegendre(4);

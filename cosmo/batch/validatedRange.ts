@@ -2,20 +2,20 @@ import type { BatchRow } from "./batchRow";
 
 /** Where the engine was compared with the single path: see test/cosmo/batch/accuracy.test.ts. Rows outside take the single path. */
 export const validatedRange = {
-  reducedHubble: [0.4, 1.1],
-  baryonDensity: [0.012, 0.04],
+  reducedHubble: [0.45, 1],
+  baryonDensity: [0.014, 0.038],
   /** Baryons and cold matter. */
-  matter: [0.06, 0.32],
-  curvature: [-0.25, 0.25],
-  w0: [-2, -0.4],
-  wa: [-2, 1],
+  matter: [0.07, 0.3],
+  curvature: [-0.22, 0.22],
+  w0: [-1.6, -0.5],
+  wa: [-1, 0.6],
   /** The sum w0 + wa, to which w tends early. */
-  earlyState: [-4, -0.4],
-  effectiveNumber: [1, 6],
+  earlyState: [-2.6, -0.3],
+  effectiveNumber: [1.3, 5.5],
   /** Sum of the masses in eV. */
   massSum: [0, 6],
-  photonTemperature: [2.4, 3],
-  helium: [0, 0.5],
+  photonTemperature: [2.45, 2.95],
+  helium: [0, 0.32],
 } as const;
 
 function within(range: readonly [number, number], value: number): boolean {
@@ -45,18 +45,18 @@ const scanPoints = 40;
 
 /**
  * Whether a row certainly has a Big Bang and H stays well away from 0 since: without radiation, (H/100)^2 a^3 =
- * omega_cb + omega_k a + omega_DE f(a) a^3 stays above a quarter of omega_cb. Rows that do not pass take the single path, which looks closely.
+ * omega_cb + omega_k a + omega_DE f(a) a^3 stays above half of omega_cb. Rows that do not pass take the single path, which looks closely.
  */
 export function staysExpanding(row: BatchRow): boolean {
   const matter = row.baryonDensity + row.coldMatterDensity;
   const curvature = row.curvature * row.reducedHubble * row.reducedHubble;
   const darkEnergy = row.darkEnergyDensity;
-  if (darkEnergy >= 0 && curvature >= -0.75 * matter) return true;
+  if (darkEnergy >= 0 && curvature >= -0.5 * matter) return true;
   const exponent = -3 * (row.w0 + row.wa);
   for (let k = 1; k <= scanPoints; k++) {
     const a = k / scanPoints;
     const growth = Math.exp(exponent * Math.log(a) - 3 * row.wa * (1 - a));
-    if (!(matter + curvature * a + darkEnergy * growth > 0.25 * matter)) return false;
+    if (!(matter + curvature * a + darkEnergy * growth > 0.5 * matter)) return false;
   }
   return true;
 }

@@ -1,3 +1,4 @@
+import { validatedRange } from "../../../cosmo/batch";
 import { type ConstantsSetName, constantsSets } from "../../../cosmo/constants";
 import type { ModelGivens } from "../../../cosmo/model";
 
@@ -39,4 +40,42 @@ export function boxModels(count: number, seed: number): ModelGivens[] {
       equalityMatter: random() < 0.3 ? ("allMatter" as const) : ("baryonsAndCold" as const),
     },
   }));
+}
+
+/**
+ * Random models with most parameters at one end or the other of the validated range: what the engine takes at its worst.
+ */
+export function cornerModels(count: number, seed: number): ModelGivens[] {
+  const random = generator(seed);
+  const pick = ([low, high]: readonly [number, number]): number => {
+    const place = random();
+    const inside = low + (high - low) * random();
+    // Just inside, so that rounding does not put the model out.
+    const margin = 1e-9 * (high - low);
+    return place < 0.4 ? low + margin : place < 0.8 ? high - margin : inside;
+  };
+  const range = validatedRange;
+  return Array.from({ length: count }, () => {
+    const baryonDensity = pick(range.baryonDensity);
+    const matter = Math.max(pick(range.matter), baryonDensity + 0.02);
+    const plain = random() < 0.3;
+    const w0 = plain ? -1 : pick(range.w0);
+    const wa = plain ? 0 : Math.min(pick(range.wa), range.earlyState[1] - 1e-6 - w0);
+    const sum = pick(range.massSum);
+    const splits = [[1], [0.5, 0.5], [1 / 3, 1 / 3, 1 / 3], [0.6, 0.3, 0.1]];
+    return {
+      hubble: 100 * pick(range.reducedHubble),
+      baryonDensity,
+      coldMatterDensity: matter - baryonDensity,
+      curvature: pick(range.curvature),
+      darkEnergy: { w0, wa },
+      neutrinos: {
+        effectiveNumber: pick(range.effectiveNumber),
+        masses: splits[Math.floor(4 * random())]!.map((share) => share * sum),
+      },
+      photonTemperature: pick(range.photonTemperature),
+      helium: pick(range.helium),
+      recombination: random() < 0.3 ? ("peebles" as const) : ("calibrated" as const),
+    };
+  });
 }
