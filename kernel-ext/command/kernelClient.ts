@@ -29,6 +29,7 @@ export function ownKernelArguments(): string[] {
 const portTakenExitCode = 98;
 const startAttempts = 3;
 const startTimeout = 60_000;
+const askAgainAfter = 3000;
 
 async function freePorts(count: number): Promise<number[]> {
   const servers = await Promise.all(
@@ -198,12 +199,15 @@ export class KernelClient {
       arrived = true;
     });
     try {
-      await this.request("kernel_info_request", {}, startTimeout);
-      // A subscription takes effect some time after connecting; only a published message proves that it has.
-      while (!arrived) {
-        if (Date.now() > deadline) throw new KernelFailure("the kernel's publications do not arrive");
-        await this.request("kernel_info_request", {}, startTimeout);
-        await this.unlessFailed(new Promise((resolve) => setTimeout(resolve, 5)));
+      // A subscription takes effect some time after connecting; only a published message proves that it has. A kernel that
+      // is not ours may lose a request or its reply while it starts, so that one is sent again from time to time.
+      for (let answered = false; !answered || !arrived; ) {
+        if (Date.now() > deadline)
+          throw new KernelFailure(`the kernel did not get ready within ${startTimeout / 1000} s`);
+        const { reply } = await this.send("kernel_info_request", {});
+        const pause = new Promise<boolean>((resolve) => setTimeout(() => resolve(false), askAgainAfter).unref());
+        if (await Promise.race([reply.then(() => true), pause])) answered = true;
+        if (answered && !arrived) await this.unlessFailed(new Promise((resolve) => setTimeout(resolve, 5)));
       }
     } finally {
       stop();

@@ -8,7 +8,7 @@ import type { MimeBundle } from "../display/sink";
 import { type CellContext, InterruptError, runInContext } from "./cellContext";
 import { type CellError, describeDiagnostics, describeThrown } from "./cellError";
 import { CellSources } from "./cellSources";
-import { prepareCompiler } from "./compiler";
+import { prepareCompiler, resolveOwnName } from "./compiler";
 import { bundleOf } from "./mimeBundle";
 import { nextTurn } from "./ownTimers";
 import { phase } from "./phase";
@@ -48,6 +48,7 @@ export class CellRunner {
     this.converters = this.createConverters();
     const { createExecutor } = require("tslab/dist/executor") as ExecuteModule;
     this.nameExecutedCode();
+    resolveOwnName();
     this.executor = createExecutor(this.workingDirectory, this.converters, {
       // The executor tells the value of the last expression by one call of `log`, what was thrown by one call of `error`
       // with one argument; diagnostics, with five, have been taken from the converter already.

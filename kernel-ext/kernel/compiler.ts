@@ -2,8 +2,8 @@
  * The TypeScript compiler as tslab's converter is to see it: the same module with source maps switched on, packages
  * found by their `exports`, and fewer files watched. It must be prepared before tslab is loaded.
  */
-import { SourceMap, type SourceMapPayload } from "node:module";
-import { dirname, sep } from "node:path";
+import Module, { SourceMap, type SourceMapPayload } from "node:module";
+import { dirname, join, sep } from "node:path";
 
 type TypeScript = typeof import("@tslab/typescript-for-tslab");
 type TranspileOptions = Parameters<TypeScript["transpileModule"]>[1];
@@ -45,6 +45,28 @@ function chain(outer: string, inner: string): CompiledFile["locate"] {
   };
 }
 
+/** The package under its own name, wherever the notebook lies: the declarations of its two entrances. */
+function ownDeclarations(): Record<string, string[]> {
+  return Object.fromEntries(
+    Object.entries(ownEntrances).map(([name, path]) => [name, [`${path.split(sep).join("/")}.d.ts`]]),
+  );
+}
+
+const ownEntrances: Record<string, string> = {
+  "cosmology-cells": join(__dirname, "..", "index"),
+  "cosmology-cells/cosmo": join(__dirname, "..", "..", "cosmo", "index"),
+};
+
+/** Lets `require` find the package under its own name from any folder, as the compiler does. */
+export function resolveOwnName(): void {
+  const loader = Module as unknown as { _resolveFilename(request: string, ...rest: unknown[]): string };
+  const original = loader._resolveFilename;
+  loader._resolveFilename = function (this: unknown, request, ...rest) {
+    const own = Object.hasOwn(ownEntrances, request) ? `${ownEntrances[request]}.js` : request;
+    return original.call(this, own, ...rest);
+  };
+}
+
 /** Files that do not change while a kernel runs; watching some hundred of them would only cost start-up time. */
 function neverChanges(path: string): boolean {
   return path.includes("/node_modules/") || path.startsWith(packageRoot);
@@ -75,6 +97,7 @@ export function prepareCompiler(): Compiler {
           inlineSourceMap: true,
           moduleResolution: original.ModuleResolutionKind.Bundler,
           types: ["node"],
+          paths: ownDeclarations(),
         },
         ...rest,
       ),

@@ -1,6 +1,6 @@
 // Real front ends, from Debian: python3-jupyter-kernel-test, jupyter-nbconvert, jupyter-console, python3-nbformat.
 import { spawn, spawnSync } from "node:child_process";
-import { existsSync, mkdirSync, readFileSync, rmSync, symlinkSync, writeFileSync } from "node:fs";
+import { existsSync, mkdirSync, readdirSync, readFileSync, rmSync, symlinkSync, writeFileSync } from "node:fs";
 import { join } from "node:path";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { codeCell, command, markdownCell, newFolder, root, writeCells } from "../kernel-ext/command/notebooks";
@@ -83,6 +83,23 @@ describe.skipIf(!available("nbconvert, nbformat"))("jupyter nbconvert --execute"
       "execute_result",
     ]);
     expect([done.cells[2].outputs[0].text].flat().join("").trim().split("\n")).toHaveLength(1500);
+  });
+
+  it("runs the demo notebooks by the kernel that they name", { timeout: 600_000 }, async () => {
+    const demos = readdirSync(join(root, "notebooks-demo")).filter((name) => name.endsWith(".ipynb"));
+    expect(demos.length).toBeGreaterThan(0);
+    for (const name of demos) {
+      const { code, output } = await run([
+        ...["-m", "nbconvert", "--to", "notebook", "--execute", "--output-dir", folder],
+        join(root, "notebooks-demo", name),
+      ]);
+      expect(code, output).toBe(0);
+      const done = JSON.parse(readFileSync(join(folder, name), "utf8"));
+      const outputs = done.cells.flatMap((cell: { outputs?: object[] }) => cell.outputs ?? []);
+      expect(outputs.length).toBeGreaterThan(0);
+      expect(outputs.filter((one: { output_type: string }) => one.output_type === "error")).toEqual([]);
+      expect(JSON.stringify(outputs)).toContain("image/svg+xml");
+    }
   });
 
   it("fails loudly on a broken cell, with the error and the line", { timeout: 300_000 }, async () => {

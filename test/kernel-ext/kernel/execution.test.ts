@@ -1,5 +1,5 @@
 // What is published, and in which order, is that of the Jupyter messaging specification 5.3 (memory).
-import { mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
+import { mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
@@ -60,6 +60,41 @@ describe("a cell that succeeds", () => {
     expect(await session.value('import { beside } from "./beside"; beside')).toBe("11");
     await session.run("/** @module defined */\nexport const defined: number = 12;");
     expect(await session.value('import { defined } from "./defined"; defined')).toBe("12");
+  });
+});
+
+describe("an import", () => {
+  it("finds the package under its own name from any folder, with its types, as the same module", async () => {
+    expect(await session.value('import * as own from "cosmology-cells";\nown.formatNumber === formatNumber')).toBe(
+      "true",
+    );
+    expect(
+      await session.value(
+        'import { evaluateModel as evaluate } from "cosmology-cells/cosmo";\nevaluate === evaluateModel',
+      ),
+    ).toBe("true");
+    const wrong = await session.run('import { formatNumber as f } from "cosmology-cells";\nf({});');
+    expect(wrong.reply.ename).toBe("TypeCheckError");
+  });
+
+  it("finds packages that are ES modules and have nothing but exports, with their types", async () => {
+    const place = join(folder, "node_modules", "only-exports");
+    mkdirSync(place, { recursive: true });
+    writeFileSync(
+      join(place, "package.json"),
+      JSON.stringify({
+        name: "only-exports",
+        version: "1.0.0",
+        type: "module",
+        exports: { "./part": { types: "./inner/part.d.ts", default: "./inner/part.js" } },
+      }),
+    );
+    mkdirSync(join(place, "inner"));
+    writeFileSync(join(place, "inner", "part.js"), "export const part = 23;\n");
+    writeFileSync(join(place, "inner", "part.d.ts"), "export declare const part: number;\n");
+    expect(await session.value('import { part } from "only-exports/part";\npart + 1')).toBe("24");
+    const wrong = await session.run('import { part as again } from "only-exports/part";\nconst s: string = again;');
+    expect(wrong.reply.ename).toBe("TypeCheckError");
   });
 });
 
