@@ -3,6 +3,7 @@ import { planck2018Table2 } from "../../cosmo/published";
 import { evaluateModel } from "../../cosmo/solve";
 import { citation } from "../../cosmo/sources";
 import { type CellResult, cellOutput, intervalChart, table } from "../display";
+import { compileModel } from "./compileModel";
 import { modelTable } from "./modelTable";
 import { namedQuantities } from "./namedQuantities";
 import { notesOf, quantityTable, sourcesOf } from "./quantityTable";
@@ -42,7 +43,7 @@ const compared = ["acousticAngle", "lastScatteringSoundHorizon", "lastScattering
  */
 export function acousticScaleCell(model: ModelGivens): CellResult<AcousticScaleValues> {
   const where = "acousticScaleCell";
-  const numbers = evaluateModel(model, { where });
+  const numbers = evaluateModel(compileModel(model, where), { where });
   const { list, values } = namedQuantities(numbers, names);
   const distance = numbers.quantity("transverseDistance", values.lastScatteringRedshift);
   const everything = [...list, distance];

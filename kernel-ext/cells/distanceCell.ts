@@ -13,6 +13,7 @@ import {
   table,
 } from "../display";
 import { checkOptions } from "./checkOptions";
+import { compileModel } from "./compileModel";
 import { modelTable } from "./modelTable";
 import { notesOf, sourcesOf } from "./quantityTable";
 import { type RedshiftList, redshiftList, spacedRedshifts } from "./redshiftList";
@@ -51,7 +52,7 @@ const defaultQuantities = [
 export function distanceCell(model: ModelGivens, options: DistanceCellOptions): CellResult<DistanceValues> {
   const where = "distanceCell";
   checkOptions(options, ["redshifts", "quantities"], where);
-  const numbers = evaluateModel(model, { where });
+  const numbers = evaluateModel(compileModel(model, where), { where });
   const redshifts = redshiftList(options?.redshifts, where);
   const names = options.quantities ?? defaultQuantities;
   if (names.length === 0) {

@@ -4,6 +4,7 @@ import type { QuantityValue } from "../../cosmo/quantity";
 import { evaluateModel, type ModelNumbers } from "../../cosmo/solve";
 import { type CellResult, cellOutput, lineChart, table } from "../display";
 import { checkOptions } from "./checkOptions";
+import { compileModel } from "./compileModel";
 import { modelTable } from "./modelTable";
 import { quantityOrNote } from "./quantityOrNote";
 import { notesOf, quantityTable, sourcesOf } from "./quantityTable";
@@ -85,7 +86,7 @@ const epochs = ["equalityRedshift", "equalityWavenumber", "accelerationRedshift"
 export function expansionCell(model: ModelGivens, options: ExpansionCellOptions = {}): CellResult<ExpansionValues> {
   const where = "expansionCell";
   checkOptions(options, ["redshifts"], where);
-  const numbers = evaluateModel(model, { where });
+  const numbers = evaluateModel(compileModel(model, where), { where });
   const turning = numbers.evaluation.once(turningRedshiftPart);
   const end = turning === undefined ? farthest : Math.min(farthest, 0.98 * turning);
   const grid = Float64Array.from(spacedRedshifts(0, end, 300, "onePlusRedshift"));

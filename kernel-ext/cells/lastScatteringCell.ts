@@ -2,6 +2,7 @@ import { visibilityHalfHeights } from "../../cosmo/lastScattering";
 import type { ModelGivens } from "../../cosmo/model";
 import { evaluateModel } from "../../cosmo/solve";
 import { type CellResult, cellOutput, lineChart } from "../display";
+import { compileModel } from "./compileModel";
 import { modelTable } from "./modelTable";
 import { namedQuantities } from "./namedQuantities";
 import { notesOf, quantityTable, sourcesOf } from "./quantityTable";
@@ -35,7 +36,7 @@ export interface LastScatteringValues {
  */
 export function lastScatteringCell(model: ModelGivens): CellResult<LastScatteringValues> {
   const where = "lastScatteringCell";
-  const numbers = evaluateModel(model, { where });
+  const numbers = evaluateModel(compileModel(model, where), { where });
   const { list, values } = namedQuantities(numbers, [
     "lastScatteringRedshift",
     "visibilityPeakRedshift",

@@ -1,6 +1,7 @@
 import type { ModelGivens } from "../../cosmo/model";
 import { evaluateModel } from "../../cosmo/solve";
 import { type CellResult, cellOutput, formatWithError, intervalChart, table } from "../display";
+import { compileModel } from "./compileModel";
 import { modelTable } from "./modelTable";
 import { notesOf, quantityTable, sourcesOf } from "./quantityTable";
 
@@ -48,7 +49,7 @@ const measuredSource = {
  */
 export function peakCell(model: ModelGivens): CellResult<PeakValues> {
   const where = "peakCell";
-  const numbers = evaluateModel(model, { where });
+  const numbers = evaluateModel(compileModel(model, where), { where });
   const peaks = [1, 2, 3].map((m) => numbers.quantity("peakMultipole", m));
   const spacing = numbers.quantity("peakSpacing");
   const heights = [2, 3].map((m) => numbers.quantity("peakHeightRatio", m));

@@ -5,6 +5,7 @@ import { tierMethods } from "../../cosmo/recombination";
 import { evaluateModel } from "../../cosmo/solve";
 import { type CellResult, cellOutput, type LineSeries, lineChart, table } from "../display";
 import { checkOptions } from "./checkOptions";
+import { compileModel } from "./compileModel";
 import { modelTable } from "./modelTable";
 import { notesOf, sourcesOf } from "./quantityTable";
 import { type RedshiftList, redshiftList, spacedRedshifts } from "./redshiftList";
@@ -62,7 +63,8 @@ export function recombinationCell(
     options.redshifts === undefined
       ? Float64Array.from(spacedRedshifts(10, 8000, 400, "onePlusRedshift"))
       : redshiftList(options.redshifts, where, -Number.MIN_VALUE);
-  const runs = tiers.map((tier) => ({ tier, numbers: evaluateModel({ ...model, recombination: tier }, { where }) }));
+  const compiled = compileModel(model, where);
+  const runs = tiers.map((tier) => ({ tier, numbers: evaluateModel({ ...compiled, recombination: tier }, { where }) }));
 
   const values: RecombinationValues = { redshift: redshifts, residualIonizedFraction: {}, lastScatteringRedshift: {} };
   const series: LineSeries[] = [];

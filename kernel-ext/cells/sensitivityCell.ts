@@ -14,6 +14,7 @@ import {
   table,
 } from "../display";
 import { checkOptions } from "./checkOptions";
+import { compileModel } from "./compileModel";
 import { explainShift, type ShiftExplanation } from "./explainShift";
 import { type HeldCombination, heldCombination } from "./heldCombination";
 import { modelTable } from "./modelTable";
@@ -97,7 +98,7 @@ export function sensitivityCell(model: ModelGivens, options: SensitivityCellOpti
   const shifted = shiftedRequest(requests, options, where);
   const asked = options.parameters === undefined ? undefined : checkedNames(options.parameters, where);
   // Closed as stated first, so that errors speak of the model as it came.
-  const stated = evaluateModel(model, { where });
+  const stated = evaluateModel(compileModel(model, where), { where });
   const numbers = evaluateModel(withMassSum(stated.model), { where });
   const columns = requests.map((request): Column => {
     const value = numbers.quantity(request.name, ...request.arguments);

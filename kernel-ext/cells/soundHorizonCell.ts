@@ -1,6 +1,7 @@
 import type { ModelGivens } from "../../cosmo/model";
 import { evaluateModel } from "../../cosmo/solve";
 import { type CellResult, cellOutput, lineChart } from "../display";
+import { compileModel } from "./compileModel";
 import { modelTable } from "./modelTable";
 import { namedQuantities } from "./namedQuantities";
 import { notesOf, quantityTable, sourcesOf } from "./quantityTable";
@@ -31,7 +32,7 @@ export interface SoundHorizonValues {
  */
 export function soundHorizonCell(model: ModelGivens): CellResult<SoundHorizonValues> {
   const where = "soundHorizonCell";
-  const numbers = evaluateModel(model, { where });
+  const numbers = evaluateModel(compileModel(model, where), { where });
   const { list, values } = namedQuantities(numbers, [
     "lastScatteringRedshift",
     "lastScatteringSoundHorizon",

@@ -4,6 +4,7 @@ import type { ModelGivens } from "../../cosmo/model";
 import type { QuantityValue } from "../../cosmo/quantity";
 import { evaluateModel } from "../../cosmo/solve";
 import { type CellResult, cellOutput, formatNumber, lineChart, table } from "../display";
+import { compileModel } from "./compileModel";
 import { modelTable } from "./modelTable";
 import { notesOf, sourcesOf } from "./quantityTable";
 import { spacedRedshifts } from "./redshiftList";
@@ -36,7 +37,7 @@ export type TimelineValues = TimelineEntry[];
  */
 export function timelineCell(model: ModelGivens): CellResult<TimelineValues> {
   const where = "timelineCell";
-  const numbers = evaluateModel(model, { where });
+  const numbers = evaluateModel(compileModel(model, where), { where });
   // Asked first: a model without a Big Bang has no ages, and nothing of what follows.
   const everything: QuantityValue[] = [numbers.quantity("age")];
   const missing = new Map<string, string[]>();
