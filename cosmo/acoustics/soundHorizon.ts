@@ -2,6 +2,7 @@ import { unitHubbleDistance } from "../distances";
 import { DomainError } from "../errors";
 import {
   backgroundIntegral,
+  earlyDarkEnergySharePart,
   expansionPart,
   type ModelEvaluation,
   type ModelQuantity,
@@ -25,6 +26,7 @@ import { redshiftArgument } from "../quantity";
  */
 export function soundHorizon(evaluation: ModelEvaluation, z: number): NumericalResult {
   requireBigBang(evaluation, "soundHorizon");
+  evaluation.once(earlyDarkEnergySharePart);
   if (evaluation.model.conventions.soundHorizon === "eisensteinHu1998") return closedForm(evaluation, z);
   const expansion = evaluation.once(expansionPart);
   const loading = baryonLoadingToday(evaluation.model);

@@ -131,6 +131,15 @@ export const stateHistoryPart: ModelPart<StateHistory | undefined> = {
 export const expansionPart: ModelPart<Expansion> = {
   name: "expansion",
   compute: (evaluation) => new Expansion(evaluation.model, evaluation.once(stateHistoryPart)),
+  notes: ({ model }) =>
+    model.photonTemperature === 0
+      ? [
+          {
+            level: "note",
+            text: "radiation neglected (photonTemperature 0): photons and neutrinos of a 2.7255 K background are 9e-5 of the density today, 3e-3 at z = 10 and half of it at z = 3400",
+          },
+        ]
+      : [],
 };
 
 /**

@@ -4,6 +4,7 @@ export { closeDarkEnergyFunction } from "./closeDarkEnergy";
 export { criticalDensity, criticalDensityQuantity } from "./criticalDensity";
 export { darkEnergyGrowth } from "./darkEnergyGrowth";
 export { decelerationAt, decelerationAtQuantity } from "./decelerationAt";
+export { earlyDarkEnergySharePart } from "./earlyDarkEnergyShare";
 export { equalityRedshift, equalityRedshiftQuantity } from "./equalityRedshift";
 export { equalityWavenumber, equalityWavenumberQuantity } from "./equalityWavenumber";
 export { equationOfStateAt, equationOfStateAtQuantity } from "./equationOfStateAt";

@@ -38,6 +38,8 @@ const quadratureError = 1e-13;
 export function historyQuantity(fields: HistoryQuantityFields): ModelQuantity {
   const { name, symbol, unit, description, equation, method, accuracy, compute } = fields;
   const needsHistory = fields.needsHistory ?? (() => true);
+  const redshiftAmong = (values: readonly number[]) =>
+    fields.arguments?.[0]?.name === "z" ? values[values.length - 1] : undefined;
   const inForce = (model: ClosedModel) => fitsInForce(model, fields.steps ?? []);
   return {
     name,
@@ -58,9 +60,9 @@ export function historyQuantity(fields: HistoryQuantityFields): ModelQuantity {
         ...(needsHistory(model) ? recombinationSources(model) : []),
       ]),
     ],
-    notes: ({ model }) => [
-      ...inForce(model).flatMap(({ fit }) => fitNotes(fit, model)),
-      ...(needsHistory(model) ? recombinationNotes(model) : []),
+    notes: (evaluation, values) => [
+      ...inForce(evaluation.model).flatMap(({ fit }) => fitNotes(fit, evaluation.model)),
+      ...(needsHistory(evaluation.model) ? recombinationNotes(evaluation, redshiftAmong(values)) : []),
     ],
     compute: (evaluation, values) => {
       const value = compute(evaluation, values);

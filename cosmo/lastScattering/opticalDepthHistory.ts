@@ -1,6 +1,12 @@
 import { lightSpeed } from "../constants";
 import { NoAnswerError } from "../errors";
-import { type Expansion, expansionPart, type ModelEvaluation, type ModelPart } from "../expansion";
+import {
+  type Expansion,
+  earlyDarkEnergySharePart,
+  expansionPart,
+  type ModelEvaluation,
+  type ModelPart,
+} from "../expansion";
 import { hundredKmPerSecondPerMpc } from "../model";
 import { findRoot, gaussLegendre, integrate } from "../numerics";
 import { type Gas, gasPart, type IonizationHistory, ionizationHistoryPart } from "../recombination";
@@ -127,11 +133,13 @@ export class OpticalDepthHistory {
 /** The depths of the model. */
 export const opticalDepthPart: ModelPart<OpticalDepthHistory> = {
   name: "optical depth",
-  compute: (evaluation) =>
-    new OpticalDepthHistory(
+  compute: (evaluation) => {
+    evaluation.once(earlyDarkEnergySharePart);
+    return new OpticalDepthHistory(
       evaluation.once(ionizationHistoryPart),
       evaluation.once(expansionPart),
       evaluation.once(gasPart),
       evaluation,
-    ),
+    );
+  },
 };

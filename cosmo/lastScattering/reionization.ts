@@ -99,8 +99,8 @@ export const ionizedFractionQuantity: ModelQuantity = {
   sources: (model) => ["lewis2008", ...recombinationSources(model)],
   usesHistory: true,
   errorFloor: historyErrorFloor(5e-9),
-  notes: (evaluation) => [
-    ...recombinationNotes(evaluation.model),
+  notes: (evaluation, [z]) => [
+    ...recombinationNotes(evaluation, z),
     ...(evaluation.once(reionizationRedshiftPart) === undefined
       ? [{ level: "note" as const, text: "no reionization stated: recombination alone" }]
       : []),

@@ -15,6 +15,7 @@ export {
   residualIonizedFractionQuantity,
 } from "./ionizedFractions";
 export { massFractionFromNucleonFraction, nucleosynthesisHelium } from "./nucleosynthesisHelium";
+export { recombinationNotes } from "./recombinationNotes";
 export { reionizationProfile } from "./reionizationProfile";
 export { type SahaState, sahaEquilibrium } from "./saha";
 export {
@@ -23,4 +24,4 @@ export {
   radiationTemperature,
   radiationTemperatureQuantity,
 } from "./temperatures";
-export { recombinationNotes, recombinationSources, tierMethods } from "./tierStatement";
+export { recombinationSources, tierMethods } from "./tierStatement";

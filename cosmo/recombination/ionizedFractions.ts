@@ -2,7 +2,8 @@ import type { ModelEvaluation, ModelQuantity } from "../expansion";
 import { pastRedshiftArgument } from "../quantity";
 import { historyErrorFloor } from "./historyErrorFloor";
 import { ionizationHistoryPart } from "./ionizationHistory";
-import { recombinationNotes, recombinationSources } from "./tierStatement";
+import { recombinationNotes } from "./recombinationNotes";
+import { recombinationSources } from "./tierStatement";
 
 /**
  * x_e of recombination alone: free electrons a hydrogen nucleus, without reionization.
@@ -37,7 +38,7 @@ export const residualIonizedFractionQuantity: ModelQuantity = {
   sources: recombinationSources,
   usesHistory: true,
   errorFloor: historyErrorFloor(5e-9),
-  notes: ({ model }) => recombinationNotes(model),
+  notes: (evaluation, [z]) => recombinationNotes(evaluation, z),
   compute: (evaluation, [z]) => ({ value: residualIonizedFraction(evaluation, z!), error: 0 }),
 };
 
@@ -53,6 +54,6 @@ export const hydrogenIonizedFractionQuantity: ModelQuantity = {
   sources: recombinationSources,
   usesHistory: true,
   errorFloor: historyErrorFloor(5e-9),
-  notes: ({ model }) => recombinationNotes(model),
+  notes: (evaluation, [z]) => recombinationNotes(evaluation, z),
   compute: (evaluation, [z]) => ({ value: hydrogenIonizedFraction(evaluation, z!), error: 0 }),
 };

@@ -2,7 +2,8 @@ import type { ModelEvaluation, ModelQuantity } from "../expansion";
 import { pastRedshiftArgument, redshiftArgument } from "../quantity";
 import { historyErrorFloor } from "./historyErrorFloor";
 import { ionizationHistoryPart } from "./ionizationHistory";
-import { recombinationNotes, recombinationSources } from "./tierStatement";
+import { recombinationNotes } from "./recombinationNotes";
+import { recombinationSources } from "./tierStatement";
 
 /**
  * T_r(z) = T_cmb (1+z), K.
@@ -52,8 +53,8 @@ export const matterTemperatureQuantity: ModelQuantity = {
   sources: recombinationSources,
   usesHistory: true,
   errorFloor: historyErrorFloor(2e-9),
-  notes: ({ model }) => [
-    ...recombinationNotes(model),
+  notes: (evaluation, [z]) => [
+    ...recombinationNotes(evaluation, z),
     { level: "note", text: "no heating by first light or reionization: not the temperature of gas today" },
   ],
   compute: (evaluation, [z]) => ({ value: matterTemperature(evaluation, z!), error: 0 }),

@@ -38,8 +38,8 @@ export function recombinationSources(model: ClosedModel): readonly SourceKey[] {
 /** Where the calibration of the tier was tested against print: the six columns of Planck 2018 VI table 2. */
 const tested = { baryons: [0.0221, 0.024], cold: [0.1158, 0.1206] } as const;
 
-/** What a reader must know of the tier before using the number. */
-export function recombinationNotes(model: ClosedModel): readonly ValidityNote[] {
+/** What a tier says of itself, in every model; recombinationNotes.ts adds what it is worth in this one. */
+export function tierNotes(model: ClosedModel): readonly ValidityNote[] {
   switch (model.recombination) {
     case "saha":
       return [
