@@ -53,8 +53,8 @@ export function wideModels(count, seed = 20260102) {
       between(0.016, 0.032),
       between(0.08, 0.2),
       between(-0.1, 0.1),
-      between(-1.3, -0.7),
-      between(-0.4, 0.4),
+      between(-1.3, -0.75),
+      between(-0.3, 0.3),
       between(2.2, 4.2),
       ...masses,
     ];

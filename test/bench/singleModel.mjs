@@ -2,7 +2,8 @@
 import { Bench } from "tinybench";
 import { built, modelNumber, suite } from "./suite.mjs";
 
-export async function timeSingleModel() {
+/** @param time milliseconds of measuring. */
+export async function timeSingleModel(time) {
   const beforeLoad = performance.now();
   const { evaluateModel } = built("cosmo/index.js");
   const load = performance.now() - beforeLoad;
@@ -16,7 +17,7 @@ export async function timeSingleModel() {
   const beforeFirst = performance.now();
   oneModel();
   const first = performance.now() - beforeFirst;
-  const bench = new Bench({ time: 4000, warmupTime: 2000 });
+  const bench = new Bench({ time, warmupTime: time / 2 });
   bench.add("full suite", oneModel);
   await bench.run();
   const { latency } = bench.tasks[0].result;

@@ -109,14 +109,40 @@ static void closeRow(Row *row, const double *given) {
 
 /* ---- expansion */
 
-static double squaredTermAt(const Row *row, double a, double logA) {
-  double radiation = row->radiation, darkEnergy = row->darkEnergy;
+static void addEnergy(double logMassRatioToday, double weight, const double *logs, double *sum, int from, int to) {
+  const double offset = (logMassRatioToday - lowestLogMass) / gridStep, perStep = 1 / gridStep;
+  for (int i = from; i < to; i++) {
+    const double place = offset + logs[i] * perStep;
+    if (!(place >= 1)) {
+      sum[i] += weight;
+      continue;
+    }
+    const int k = (int)place;
+    const double p = place - k, q = 1 - p;
+    sum[i] += weight * (q * (1 + p) * (1 - 0.5 * p) * neutrinoEnergy[k] +
+                        p * (1 + q) * (1 - 0.5 * q) * neutrinoEnergy[k + 1] -
+                        p * q * ((1 + q) * neutrinoEnergy[k - 1] + (1 + p) * neutrinoEnergy[k + 2]) / 6);
+  }
+}
+
+static void fillSquaredTerms(const Row *row, const double *a, const double *logs, double *out, int from, int to) {
+  const double radiation = row->radiation, matter = row->baryons + row->cold, darkEnergy = row->darkEnergy;
+  const double curvature = row->curvature * row->reducedHubble * row->reducedHubble;
+  if (row->w0 == -1 && row->wa == 0) {
+    for (int i = from; i < to; i++) {
+      const double here = a[i], square = here * here;
+      out[i] = radiation + here * (matter + here * curvature) + square * square * darkEnergy;
+    }
+  } else {
+    const double power = -3 * (row->w0 + row->wa), tilt = 3 * row->wa;
+    for (int i = from; i < to; i++) {
+      const double here = a[i], growth = power * logs[i] - tilt * (1 - here);
+      const double seen = growth < -23 ? 0 : darkEnergy * exp(growth);
+      out[i] = radiation + here * (matter + seen + here * curvature);
+    }
+  }
   for (int m = 0; m < row->massCount; m++)
-    radiation += row->species * row->massShare[m] * tabulatedEnergy(row->logMass[m] + logA);
-  if (row->w0 != -1 || row->wa != 0)
-    darkEnergy *= exp(-3 * (1 + row->w0 + row->wa) * log(a) - 3 * row->wa * (1 - a));
-  const double square = a * a, curvature = row->curvature * row->reducedHubble * row->reducedHubble;
-  return radiation + a * (row->baryons + row->cold + a * curvature) + square * square * darkEnergy;
+    addEnergy(row->logMass[m], row->species * row->massShare[m], logs, out, from, to);
 }
 
 static void fillExpansion(const Row *row) {
@@ -161,7 +187,7 @@ static double sobolevEscape(double depth) {
 
 static double continuumPlace(double g) {
   const double place = sqrt(sqrt(sqrt(g))) * continuumPerRoot;
-  return place < highestRoot * continuumPerRoot ? place : highestRoot * continuumPerRoot;
+  return fmin(place, highestRoot * continuumPerRoot);
 }
 
 static double lineEscapes(const double *h, double depths, double place) {
@@ -184,12 +210,9 @@ static void marchHelium(const Row *row) {
   for (int i = 0; i < startPoints; i++) {
     const double n = density * rates[i * hydrogenColumns + 9], s = helium[i * heliumColumns + 2] / n;
     const double hydrogen = hydrogenSaha[i] / n;
-    double electrons = 1 + ratio, share = 0;
-    for (int k = 0; k < 3; k++) {
-      share = electrons / (hydrogen + electrons);
-      const double b = 1 - share + s;
-      electrons = 1 - share + ratio * 2 * s / (b + sqrt(b * b + 4 * ratio * s));
-    }
+    double electrons = 1 + ratio;
+    const double share = electrons / (hydrogen + electrons), b = 1 - share + s;
+    electrons = 1 - share + ratio * 2 * s / (b + sqrt(b * b + 4 * ratio * s));
     neutral[i] = share;
     neutralHelium[i] = electrons / (electrons + s);
     places[i] = continuumPlace(helium[i * heliumColumns + 10] * ratio * neutralHelium[i] / share);
@@ -403,51 +426,65 @@ static void depths(const Row *row, Crossing *star, Crossing *dragged) {
 
 /* ---- horizons */
 
+enum {
+  dragNodes = sizeof dragNode / sizeof *dragNode,
+  fixedNodes = sizeof fixedNode / sizeof *fixedNode,
+  dragBegin = earlyNodes,
+  fixedBegin = dragBegin + dragNodes,
+  lateBegin = fixedBegin + fixedNodes,
+  nodeCount = lateBegin + lateNodes
+};
+
+static double node[nodeCount], nodeLog[nodeCount], nodeWeight[nodeCount], term[nodeCount];
+
 typedef struct {
   double sound, light, time;
 } Sums;
 
-static void shortWay(const Row *row, Sums *sums, double star, double to, double logStar, int count, const double *nodes,
-                     const double *weights) {
+static void setShort(int begin, int count, const double *nodes, const double *weights, double star, double to,
+                     double logStar) {
   const double half = (to - star) / 2;
   for (int i = 0; i < count; i++) {
     const double way = half * (1 + nodes[i]), a = star + way, t = way / (star + a), s = t * t;
-    const double logRatio = 2 * t * (1 + s * (1.0 / 3 + s * (1.0 / 5 + s * (1.0 / 7))));
-    const double part = half * weights[i] / sqrt(squaredTermAt(row, a, logStar + logRatio));
-    sums->light += part;
-    sums->time += part * a;
-    sums->sound += part / sqrt(3 * (1 + row->loading * a));
+    node[begin + i] = a;
+    nodeLog[begin + i] = logStar + 2 * t * (1 + s * (1.0 / 3 + s * (1.0 / 5 + s * (1.0 / 7))));
+    nodeWeight[begin + i] = half * weights[i];
   }
+}
+
+static Sums add(const Row *row, Sums sums, int from, int to) {
+  for (int i = from; i < to; i++) {
+    const double a = node[i], part = nodeWeight[i] / sqrt(term[i]);
+    sums.light += part;
+    sums.time += part * a;
+    sums.sound += part / sqrt(3 * (1 + row->loading * a));
+  }
+  return sums;
 }
 
 static void horizons(const Row *row, double star, double drag, double *out) {
   const double logStar = log(star);
   Sums sums = {0, 0, 0};
   for (int i = 0; i < earlyNodes; i++) {
-    const double a = star * earlyNode[i];
-    const double part = star * earlyWeight[i] / sqrt(squaredTermAt(row, a, logStar + earlyLog[i]));
-    sums.light += part;
-    sums.time += part * a;
-    sums.sound += part / sqrt(3 * (1 + row->loading * a));
+    node[i] = star * earlyNode[i];
+    nodeLog[i] = logStar + earlyLog[i];
+    nodeWeight[i] = star * earlyWeight[i];
   }
+  setShort(dragBegin, dragNodes, dragNode, dragWeight, star, drag, logStar);
+  setShort(fixedBegin, fixedNodes, fixedNode, fixedWeight, star, fixedStart, logStar);
+  fillSquaredTerms(row, node, nodeLog, term, 0, nodeCount);
+  sums = add(row, sums, 0, dragBegin);
   const double timeAtStar = sums.time;
   out[2] = unitDistance * sums.sound;
-  shortWay(row, &sums, star, drag, logStar, sizeof dragNode / sizeof *dragNode, dragNode, dragWeight);
+  sums = add(row, sums, dragBegin, fixedBegin);
   out[3] = unitDistance * sums.sound;
-  sums.light = 0;
-  sums.time = timeAtStar;
-  shortWay(row, &sums, star, fixedStart, logStar, sizeof fixedNode / sizeof *fixedNode, fixedNode, fixedWeight);
-  for (int i = 0; i < lateNodes; i++) {
-    const double a = lateNode[i], part = lateWeight[i] / sqrt(squaredTermAt(row, a, lateLog[i]));
-    sums.light += part;
-    sums.time += part * a;
-  }
+  sums = add(row, (Sums){0, 0, 0}, fixedBegin, nodeCount);
   const double along = unitDistance * sums.light, radius = row->reducedHubble / unitDistance;
   const double k = -row->curvature * radius * radius, q = k * along * along, root = sqrt(fabs(k));
   const double across = fabs(q) < 1e-3 ? along * (1 - q / 6 * (1 - q / 20 * (1 - q / 42)))
                                        : (k > 0 ? sin(root * along) : sinh(root * along)) / root;
   out[4] = 100 * out[2] / fabs(across);
-  out[6] = unitTime * sums.time;
+  out[6] = unitTime * (timeAtStar + sums.time);
 }
 
 /* ---- damping */
@@ -471,7 +508,7 @@ static double integral(int upper, int lower) {
 static double damping(const Row *row, const Crossing *from) {
   enum { topPoint = 2, coarseJoint = heliumAtMainTop + 1, fineJoint = mainFirst + coarseStride };
   const int start = from->lower - 1;
-  const double loading = row->loading, ratio = row->heliumRatio, scale = 1 / photonTemperature;
+  const double loading = row->loading, ratio = row->heliumRatio;
   double partial = 0, power = from->part, above = 0;
   fillIntegrand(row, 0, coarseJoint + 3);
   fillIntegrand(row, mainFirst, start + 4);
@@ -481,17 +518,23 @@ static double damping(const Row *row, const Crossing *from) {
     partial += coefficient * (1 - power) / (p + 1);
     power *= from->part;
   }
+  static double scaleFactor[hotNodes], logs[hotNodes], terms[hotNodes];
   for (int k = 0; k < hotNodes; k++) {
-    const double x = hotTemperature[k] * scale, density = row->hydrogenDensity * x * x * x;
-    const double once = hotHelium[k] / density, twice = hotHeliumIon[k] / density;
+    scaleFactor[k] = photonTemperature / hotTemperature[k];
+    logs[k] = logPhotonTemperature - hotLogTemperature[k];
+  }
+  fillSquaredTerms(row, scaleFactor, logs, terms, 0, hotNodes);
+  for (int k = 0; k < hotNodes; k++) {
+    const double a = scaleFactor[k], x = 1 / a, perDensity = a * a * a / row->hydrogenDensity;
+    const double toOnce = hotOnce[k] * perDensity, toTwice = hotTwice[k] * perDensity;
     double electrons = 1 + ratio;
     for (int pass = 0; pass < 2; pass++) {
-      const double first = once / electrons, second = first * twice / electrons;
-      electrons = 1 + ratio * (first + 2 * second) / (1 + first + second);
+      const double first = electrons * toOnce, second = toOnce * toTwice;
+      electrons = 1 + ratio * (first + 2 * second) / (electrons * electrons + first + second);
     }
-    const double a = 1 / x, mixed = x + loading;
-    const double inverse = a * a / sqrt(squaredTermAt(row, a, logPhotonTemperature - hotLogTemperature[k]));
-    above += hotWeight[k] * (loading * loading + 16.0 / 15 * x * mixed) * inverse / (mixed * mixed * x * electrons);
+    const double mixed = x + loading;
+    above += hotWeight[k] * a * a * (loading * loading + 16.0 / 15 * x * mixed) /
+             (sqrt(terms[k]) * mixed * mixed * x * electrons);
   }
   const double onGrid =
       gridStep * (partial + integral(fineJoint, start) + coarseStride * integral(topPoint, coarseJoint));
@@ -540,6 +583,11 @@ int main(int argc, char **argv) {
     if (fscanf(file, "%lf", &rows[i]) != 1) return 2;
   fclose(file);
   logPhotonTemperature = log(photonTemperature);
+  for (int i = 0; i < lateNodes; i++) {
+    node[lateBegin + i] = lateNode[i];
+    nodeLog[lateBegin + i] = lateLog[i];
+    nodeWeight[lateBegin + i] = lateWeight[i];
+  }
   for (int i = 0; i < count; i++) suite(rows + 10 * i, out + 7 * i);
   const double wallStart = wall(), processorStart = processor();
   for (int k = 0; k < rounds; k++)

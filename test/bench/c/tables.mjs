@@ -85,7 +85,7 @@ export function writeTables(path, photonTemperature = 2.7255) {
     highestRoot: continuum.highest,
     sobolevPerDepth: sobolev.perDepth,
     deepest: sobolev.deepest,
-    hotNodes: nodes.length,
+    hotNodes: nodes.temperatures.length,
     earlyNodes: early.nodes.length,
     lateNodes: late.nodes.length,
   });
@@ -139,11 +139,11 @@ export function writeTables(path, photonTemperature = 2.7255) {
       const depth = (i - 1) / sobolev.perDepth;
       return depth === 0 ? 1 : -Math.expm1(-depth) / depth;
     }),
-    hotTemperature: nodes.map((node) => node.temperature),
-    hotLogTemperature: nodes.map((node) => node.logTemperature),
-    hotWeight: nodes.map((node) => node.weight),
-    hotHelium: nodes.map((node) => node.helium),
-    hotHeliumIon: nodes.map((node) => node.heliumIon),
+    hotTemperature: nodes.temperatures,
+    hotLogTemperature: nodes.logTemperatures,
+    hotWeight: nodes.weights,
+    hotOnce: nodes.once,
+    hotTwice: nodes.twice,
     earlyNode: early.nodes,
     earlyLog: early.logs,
     earlyWeight: early.weights,
