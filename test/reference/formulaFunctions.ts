@@ -1,3 +1,4 @@
+import type * as heliumEscape from "../../cosmo/batch/heliumEscape";
 import type * as blackbodyChromaticity from "../../cosmo/blackbody/blackbodyChromaticity";
 import type * as colorMatching from "../../cosmo/blackbody/colorMatching";
 import type * as photonNumberDensity from "../../cosmo/blackbody/photonNumberDensity";
@@ -19,10 +20,12 @@ import type * as lymanAlphaCorrection from "../../cosmo/recombination/lymanAlpha
 import type * as nucleosynthesisHelium from "../../cosmo/recombination/nucleosynthesisHelium";
 import type * as reionizationProfile from "../../cosmo/recombination/reionizationProfile";
 import type * as sahaFactors from "../../cosmo/recombination/sahaFactors";
+import type * as evaluateModel from "../../cosmo/solve/evaluateModel";
 import type { FormulaArgument } from "./readFormulas";
 
 /** The modules of cosmo/ whose formulas have references, by their place below cosmo/. */
 export interface FormulaModules {
+  readonly "batch/heliumEscape": typeof heliumEscape;
   readonly "blackbody/blackbodyChromaticity": typeof blackbodyChromaticity;
   readonly "blackbody/colorMatching": typeof colorMatching;
   readonly "blackbody/photonNumberDensity": typeof photonNumberDensity;
@@ -43,6 +46,7 @@ export interface FormulaModules {
   readonly "recombination/nucleosynthesisHelium": typeof nucleosynthesisHelium;
   readonly "recombination/reionizationProfile": typeof reionizationProfile;
   readonly "recombination/sahaFactors": typeof sahaFactors;
+  readonly "solve/evaluateModel": typeof evaluateModel;
 }
 
 /** Gives a module of cosmo/: the one that runs, or a copy with a changed coefficient. */
@@ -82,6 +86,50 @@ function withSet<Place extends keyof FormulaModules>(
   return entry(place, (module, values, load) => {
     const call = pick(module) as (...all: unknown[]) => number;
     return call(...values.slice(0, -1), setOf(load, values[values.length - 1]!));
+  });
+}
+
+/** A quantity of the register, for a flat model with massless neutrinos and everything else at its default. */
+function ofModel(quantity: string): FormulaFunction {
+  return entry(
+    "solve/evaluateModel",
+    (module, [hubble, baryonDensity, coldMatterDensity, helium, photonTemperature, constants, ...own]) => {
+      const [z] = own as Numbers;
+      const givens = {
+        hubble: hubble as number,
+        baryonDensity: baryonDensity as number,
+        coldMatterDensity: coldMatterDensity as number,
+        helium: helium as number,
+        photonTemperature: photonTemperature as number,
+        neutrinos: { masses: [0, 0, 0] },
+        conventions: { constants: constants as constantsSets.ConstantsSetName },
+      };
+      return quantity === "reionizationDepth"
+        ? module.evaluateModel({ ...givens, reionizationRedshift: z! }).value(quantity)
+        : module.evaluateModel(givens).value(quantity, ...(own as Numbers));
+    },
+  );
+}
+
+/**
+ * 1/(1 + a' g^b') out of the batch engine's table, at one of its points: a line of strength 1 against an ionization of 1 makes
+ * C/(C + 1) of it, when nothing else escapes.
+ */
+function continuumEscape(line: "singlet" | "triplet"): FormulaFunction {
+  return entry("batch/heliumEscape", (module, [singletStrength]) => {
+    const table = new Float64Array(11);
+    const at =
+      line === "singlet"
+        ? { recombination: 0, decay: 4, ionization: 5 }
+        : { recombination: 1, decay: 6, ionization: 7 };
+    // So strong that the two-photon decay beside it is nothing.
+    const strong = 1e40;
+    table[at.recombination] = 1;
+    table[5] = table[7] = 1;
+    table[at.decay] = table[at.ionization] = strong;
+    table[8] = table[9] = 1e300;
+    const share = module.lineEscapes(table, 0, 1, module.continuumPlace(singletStrength as number));
+    return share / (1 - share);
   });
 }
 
@@ -202,6 +250,18 @@ export const formulaFunctions: Readonly<Record<string, FormulaFunction>> = {
     ];
     return module.peakPhase(peak, { baryonDensity, ratio, spectralIndex, earlyDarkEnergy });
   }),
+
+  "ofModel.baryonToPhotonRatio": ofModel("baryonToPhotonRatio"),
+  "ofModel.reionizationDepth": ofModel("reionizationDepth"),
+  "ofModel.backgroundBrightness": ofModel("backgroundBrightness"),
+  "ofModel.wienFrequency": ofModel("wienFrequency"),
+  "ofModel.wienWavelength": ofModel("wienWavelength"),
+  "ofModel.photonNumberDensity": ofModel("photonNumberDensity"),
+  "ofModel.age.carroll1992": ofModel("age.carroll1992"),
+  "ofModel.luminosityDistance.pen1999": ofModel("luminosityDistance.pen1999"),
+  "ofModel.peakHeightRatio": ofModel("peakHeightRatio"),
+  "continuumEscape.singlet": continuumEscape("singlet"),
+  "continuumEscape.triplet": continuumEscape("triplet"),
 
   planckLaw: withSet("blackbody/planckLaw", (module) => module.planckLaw),
   photonNumberDensity: withSet("blackbody/photonNumberDensity", (module) => module.photonNumberDensity),

@@ -6,7 +6,7 @@ also runs fits.py and blackbody.py; the argument, if any, is blackbody.py's.
 
 from itertools import product
 
-from mpmath import e, exp, findroot, log, mpf, pi, sqrt, tanh
+from mpmath import exp, findroot, log, mpf, pi, quad, sqrt, tanh
 
 import blackbody
 import constants as K
@@ -145,6 +145,55 @@ def masses(total, ordering, which):
     return sorted(found, reverse=True)[int(which)]
 
 
+def model(hubble, wb, wc, T, name):
+    """(H0 in 1/s, Omega_m, Omega_r, Omega_L) of a flat model with massless neutrinos, N_eff 3.044 and radiation inside."""
+    h2 = (hubble / 100) ** 2
+    radiation = photons(T, name) * (1 + m(7) / 8 * (m(4) / 11) ** (m(4) / 3) * m("3.044")) / h2
+    matter = (wb + wc) / h2
+    return hubble * 1000 / MEGAPARSEC, matter, radiation, 1 - matter - radiation
+
+
+def hydrogen_density(wb, Y, name):
+    return (1 - Y) * wb * unit_density(name) / (M_H * con(name, "u"))
+
+
+def baryons_per_photon(hubble, wb, wc, Y, T, name):
+    n_H = hydrogen_density(wb, Y, name)
+    n_He = Y / (M_HE / M_H * (1 - Y)) * n_H
+    return (n_H + 4 * n_He) / blackbody.photons(T, name)
+
+
+def reionization_depth(hubble, wb, wc, Y, T, name, z_re):
+    H0, matter, radiation, rest = model(hubble, wb, wc, T, name)
+    f_He = Y / (M_HE / M_H * (1 - Y))
+    scale = C * con(name, "sigma_T") * hydrogen_density(wb, Y, name) / H0
+
+    def slope(z):
+        u = 1 + z
+        return scale * u ** 2 * reionized(z, z_re, f_He) / sqrt(matter * u ** 3 + radiation * u ** 4 + rest)
+
+    return quad(slope, [0, 2, 3, m("3.5"), 4, 5, z_re - 1, z_re, z_re + 1, z_re + 3, 20, 50])
+
+
+# givens: hubble, omega_b, omega_c, Y_p, T_cmb, set; then the quantity's own arguments
+OF_MODEL = {
+    "baryonToPhotonRatio": ("n_H + 4 n_He over Planck's photons", baryons_per_photon, [()]),
+    "reionizationDepth": ("Lewis 2008; int c sigma_T n_H x_re dz/[H (1+z)] from 0 to 50 by mpmath", reionization_depth, [(6.3,), (7.68,), (9.4,)]),
+    "backgroundBrightness": ("Planck 1901, MJy/sr at GHz",
+                             lambda h, wb, wc, Y, T, name, ghz: blackbody.planck(ghz * 10 ** 9, T, name) * m(10) ** 20, [(30.0,), (160.23,), (857.0,)]),
+    "wienFrequency": ("Wien 1893, GHz", lambda h, wb, wc, Y, T, name: blackbody.wien_frequency(T, name) / 10 ** 9, [()]),
+    "wienWavelength": ("Wien 1893, mm", lambda h, wb, wc, Y, T, name: blackbody.wien_wavelength(T, name) * 1000, [()]),
+    "photonNumberDensity": ("Planck 1901, 1/cm3", lambda h, wb, wc, Y, T, name: blackbody.photons(T, name) / 10 ** 6, [()]),
+    "age.carroll1992": ("Carroll, Press & Turner 1992 (memory), Gyr",
+                        lambda h, wb, wc, Y, T, name: fits.carroll(model(h, wb, wc, T, name)[1], model(h, wb, wc, T, name)[3])
+                        / model(h, wb, wc, T, name)[0] / (m(K.JULIAN_YEAR) * 10 ** 9), [()]),
+    "luminosityDistance.pen1999": ("Pen 1999, Mpc",
+                                   lambda h, wb, wc, Y, T, name, z: C / 1000 / h * fits.pen(z, model(h, wb, wc, T, name)[1]), [(0.5,), (3.0,)]),
+    "peakHeightRatio": ("Hu et al. 2001 (memory) at n_s 0.965, the vocabulary's default",
+                        lambda h, wb, wc, Y, T, name, peak: (fits.second_height if peak == 2 else fits.third_height)(wb, wb + wc, m("0.965")), [(2,), (3,)]),
+}
+GIVENS = [(67.4, 0.0224, 0.12, 0.2454, 2.7255), (71.3, 0.0217, 0.113, 0.251, 2.71)]
+
 FIELDS = {"gravitation": "G", "planck": "h", "boltzmann": "k", "elementaryCharge": "e", "electronMass": "m_e", "protonMass": "m_p",
           "atomicMassUnit": "u", "thomsonCrossSection": "sigma_T", "stefanBoltzmann": "sigma_SB"}
 SCIPY_NAMES = {
@@ -249,6 +298,15 @@ def main():
             (0.06, "oneMassive"), (0.12, "degenerate"), (0.0591, "normal"), (0.065, "normal"), (0.12, "normal"), (0.3, "normal"),
             (0.1, "inverted"), (0.12, "inverted"), (0.3, "inverted"))
          for which in ((0,) if ordering == "oneMassive" else (0, 1, 2))])
+    names = ["hubble", "baryonDensity", "coldMatterDensity", "helium", "photonTemperature", "constants"]
+    for quantity, (source, function, own) in OF_MODEL.items():
+        put("ofModel." + quantity, source, names + ["argument"] * len(own[0]), function,
+            [given + (name,) + argument for given in GIVENS for name in SETS for argument in own])
+    for line, A, level, sigma, a, b in (("singlet", "He_singlet", "He_2p", "singlet", "0.36", "0.86"), ("triplet", "He_triplet", "He_3P", "triplet", "0.66", "0.9")):
+        strength = lambda A, level, sigma: RATE[A] / (m(K.SIGMA_1S[sigma]) * LEVEL[level] ** 3)
+        ratio = strength(A, level, sigma) / strength("He_singlet", "He_2p", "singlet")
+        put("continuumEscape." + line, wms + "; 1/(1 + a' g^b'), the singlet line's g given", ["singletStrength"],
+            lambda g, ratio=ratio, a=a, b=b: 1 / (1 + m(a) * (ratio * g) ** m(b)), [(r ** 8,) for r in (0.5, 1.0, 1.5, 2.0, 3.0, 6.0)])
     fits.main()
     blackbody.main()
 
