@@ -33,7 +33,7 @@ export type TimelineValues = TimelineEntry[];
  * Errors: a model without a Big Bang, which has no ages. Events that a model does not have are told in notes.
  * @returns `values`: an array of { event, redshift, age in Gyr, temperature in K }.
  * Accuracy 1e-8, nucleosynthesis apart: its age leaves out the pairs of electrons and positrons, which have nearly gone by then.
- * @example timelineCell({ hubble: 67.4, baryonDensity: 0.0224, coldMatterDensity: 0.12 }).values.at(-1).age // 13.8
+ * @example timelineCell({ hubble: 67.4, baryonDensity: 0.0224, coldMatterDensity: 0.12 }).values.at(-1)?.age // 13.8
  */
 export function timelineCell(model: ModelGivens): CellResult<TimelineValues> {
   const where = "timelineCell";

@@ -6,22 +6,9 @@ import { type Browser, chromium, type Page } from "playwright-core";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { lineChart } from "../../../kernel-ext/display";
 import { sampleCharts } from "./charts/sampleCharts";
+import { inspect, type TextPlaces } from "./charts/textPlaces";
 
 const executablePath = "/usr/bin/chromium";
-
-/** Runs in the page: texts that stick out of their picture, and pairs of texts that overlap. */
-const inspect = `(() => {
-  const frame = document.querySelector("svg").getBoundingClientRect();
-  const texts = [...document.querySelectorAll("svg text")].map((node) => ({ words: node.textContent, box: node.getBoundingClientRect() }));
-  const out = texts.filter(({ box }) => box.left < frame.left - 0.5 || box.right > frame.right + 0.5 || box.top < frame.top - 0.5 || box.bottom > frame.bottom + 0.5);
-  const over = [];
-  for (const [i, one] of texts.entries()) for (const other of texts.slice(i + 1)) {
-    const wide = Math.min(one.box.right, other.box.right) - Math.max(one.box.left, other.box.left);
-    const high = Math.min(one.box.bottom, other.box.bottom) - Math.max(one.box.top, other.box.top);
-    if (wide > 1 && high > 4) over.push(one.words + " / " + other.words);
-  }
-  return { count: texts.length, out: out.map(({ words }) => words), over };
-})()`;
 
 describe.skipIf(!existsSync(executablePath))("pictures in Chromium", () => {
   let browser: Browser;
@@ -40,7 +27,7 @@ describe.skipIf(!existsSync(executablePath))("pictures in Chromium", () => {
       it(`${name}: no text is cut off or lies on another in ${face}`, async () => {
         const svg = (await make().toSvg()).replace(/font-family="[^"]*"/g, `font-family="${face}"`);
         await page.setContent(`<body style="margin:40px">${svg}</body>`);
-        const seen = (await page.evaluate(inspect)) as { count: number; out: string[]; over: string[] };
+        const seen = (await page.evaluate(inspect)) as TextPlaces;
         expect(seen.count).toBeGreaterThan(5);
         expect(seen.out).toEqual([]);
         expect(seen.over).toEqual([]);
@@ -59,7 +46,7 @@ describe.skipIf(!existsSync(executablePath))("pictures in Chromium", () => {
       rules: [{ axis: "x", at: 0.97, label: "a long name near the edge of the plot" }],
     });
     await page.setContent(`<body style="margin:40px">${await chart.toSvg()}</body>`);
-    const seen = (await page.evaluate(inspect)) as { out: string[]; over: string[] };
+    const seen = (await page.evaluate(inspect)) as TextPlaces;
     expect(seen).toMatchObject({ out: [], over: [] });
   });
 
