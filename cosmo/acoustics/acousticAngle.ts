@@ -15,7 +15,7 @@ export const lastScatteringDistancePart: ModelPart<number> = {
  * theta_* = r_s(z_*)/D_M(z_*), from the full computation of z_* unless `conventions` ask for a fit.
  *
  * Accuracy 1e-10. Source: Planck 2018 VI, section 2 and table 2.
- * @example acousticAngle(evaluation) // 1.0411 near Planck's parameters
+ * @example acousticAngle(evaluation) // 1.0412 near Planck's parameters
  */
 export function acousticAngle(evaluation: ModelEvaluation): number {
   return (100 * lastScatteringSoundHorizon(evaluation)) / evaluation.once(lastScatteringDistancePart);

@@ -6,7 +6,7 @@ import { acousticAngle } from "./acousticAngle";
  * l_A = pi/theta_*: the multipole spacing of the acoustic scale.
  *
  * Accuracy 1e-10. Source: Bond, Efstathiou & Tegmark 1997.
- * @example acousticMultipole(evaluation) // 301.8
+ * @example acousticMultipole(evaluation) // 301.7
  */
 export function acousticMultipole(evaluation: ModelEvaluation): number {
   return (100 * Math.PI) / acousticAngle(evaluation);

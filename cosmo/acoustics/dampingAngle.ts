@@ -7,7 +7,7 @@ import { dampingWavenumber } from "./dampingWavenumber";
  * 100 theta_D: angle of the damping scale in units of 0.01 rad, theta_D = pi/[k_D D_M(z_*)].
  *
  * Accuracy 5e-10. Source: Planck 2018 VI, table 2.
- * @example dampingAngle(evaluation) // 0.1608
+ * @example dampingAngle(evaluation) // 0.1607
  */
 export function dampingAngle(evaluation: ModelEvaluation): number {
   return (100 * Math.PI) / (dampingWavenumber(evaluation) * evaluation.once(lastScatteringDistancePart));

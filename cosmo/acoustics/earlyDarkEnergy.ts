@@ -26,7 +26,7 @@ const shareBeforePart: ModelPart<number> = {
  * O = (1/eta_star) int_0^eta_star Omega_DE(eta) d eta.
  *
  * Method: adaptive Gauss-Kronrod. Accuracy 1e-9, or 1e-14 absolute. Source: Doran & Lilley 2002 (memory).
- * @example earlyDarkEnergy(evaluation) // 3e-10 for a cosmological constant
+ * @example earlyDarkEnergy(evaluation) // 2.4e-10 for a cosmological constant
  */
 export function earlyDarkEnergy(evaluation: ModelEvaluation): number {
   return evaluation.once(shareBeforePart);

@@ -18,7 +18,7 @@ export function equalityHorizonAngle(evaluation: ModelEvaluation): number {
  * 100 theta_s,eq: angle of the sound horizon at equality in units of 0.01 rad, theta_s,eq = r_s(z_eq)/D_M(z_*).
  *
  * Accuracy 2e-12. Source: Planck 2018 VI, table 2.
- * @example equalitySoundAngle(evaluation) // 0.4494
+ * @example equalitySoundAngle(evaluation) // 0.4493
  */
 export function equalitySoundAngle(evaluation: ModelEvaluation): number {
   const horizon = soundHorizon(evaluation, equalityRedshift(evaluation)).value;

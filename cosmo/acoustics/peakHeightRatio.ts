@@ -19,7 +19,7 @@ const where = "peakHeightRatio";
  *
  * @param peak m: 2 or 3; others: DomainError. A model without baryons or matter: NoAnswerError. Accuracy of the fit: 3% at the
  * measured peaks. Source: Hu, Fukugita, Zaldarriaga & Tegmark 2001 (memory).
- * @example peakHeightRatio(evaluation, 2) // 0.45
+ * @example peakHeightRatio(evaluation, 2) // 0.46
  */
 export function peakHeightRatio(evaluation: ModelEvaluation, peak: number): number {
   const { baryonDensity, matterDensity, scalarSpectralIndex } = evaluation.model;

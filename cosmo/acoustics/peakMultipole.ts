@@ -20,7 +20,7 @@ export const peakPhaseFit: PublishedFit = {
  *
  * @param peak m: 1, 2 or 3. Accuracy of the fit: 0.6% at the measured peaks; of l_A 1e-10.
  * Source: Hu, Fukugita, Zaldarriaga & Tegmark 2001; Doran & Lilley 2002.
- * @example peakMultipole(evaluation, 1) // 220.8
+ * @example peakMultipole(evaluation, 1) // 220.7
  */
 export function peakMultipole(evaluation: ModelEvaluation, peak: number): number {
   const { model } = evaluation;
@@ -37,7 +37,7 @@ export function peakMultipole(evaluation: ModelEvaluation, peak: number): number
  * Mean spacing of the first three acoustic peaks in multipole: (l_3 - l_1)/2.
  *
  * Higher peaks stand l_A apart. Accuracy and source as {@link peakMultipole}.
- * @example peakSpacing(evaluation) // 296.8
+ * @example peakSpacing(evaluation) // 296.7
  */
 export function peakSpacing(evaluation: ModelEvaluation): number {
   return (peakMultipole(evaluation, 3) - peakMultipole(evaluation, 1)) / 2;

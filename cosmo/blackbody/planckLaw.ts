@@ -10,7 +10,7 @@ import { type BlackbodyQuantity, requireTemperature } from "./blackbodyModel";
  *
  * @param frequency nu in Hz, 0 or more; at 0 the brightness is 0. @param temperature T in K, positive. Others: DomainError.
  * Closed form; accuracy 1e-14, relative, as long as the brightness is not below 1e-300. Source: Planck 1901.
- * @example planckLaw(160.23e9, 2.7255, constantsSets.codata2022) // 3.835e-18
+ * @example planckLaw(160.23e9, 2.7255, constantsSets.codata2022) // 3.839e-18
  */
 export function planckLaw(frequency: number, temperature: number, constants: ConstantsSet): number {
   requireTemperature(temperature, "planckLaw");

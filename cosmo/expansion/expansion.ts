@@ -111,6 +111,7 @@ export const stateHistoryPart: ModelPart<StateHistory | undefined> = {
     return w === undefined ? undefined : new StateHistory(model.darkEnergy, w);
   },
   approximate: (model) => model.darkEnergy.table !== undefined,
+  relativeError: (evaluation) => evaluation.once(stateHistoryPart)?.relativeError ?? 0,
   notes: ({ model: { darkEnergy } }) => {
     const beyond = "followed from z = 1e8 to a = 1000 and held beyond";
     if (darkEnergy.equation !== undefined) {

@@ -54,6 +54,11 @@ export class StateHistory {
     return a < Math.exp(-earliestFollowed) ? this.early : this.checked(a);
   }
 
+  /** Relative error of f(a): three times that of the integral. */
+  get relativeError(): number {
+    return 3 * Math.max(this.past.error, this.future?.integral.error ?? 0);
+  }
+
   /** w as a goes to 0. */
   get earlyState(): number {
     return this.early;

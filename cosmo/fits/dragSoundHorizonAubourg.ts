@@ -47,7 +47,7 @@ export function aubourgDragSoundHorizon(
  *
  * Arguments as {@link aubourgDragSoundHorizon}, and @param effectiveNumber N_eff, 3 to 5. Accuracy of the fit 0.119%.
  * Source: Aubourg et al. 2015, eq. 17 (memory).
- * @example aubourgDragSoundHorizonWithNeutrinos(0.022383, 0.142493, 6.451e-4, 3.046) // 147.04
+ * @example aubourgDragSoundHorizonWithNeutrinos(0.022383, 0.142493, 6.451e-4, 3.046) // 147.01
  */
 export function aubourgDragSoundHorizonWithNeutrinos(
   baryonDensity: number,

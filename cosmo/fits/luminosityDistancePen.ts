@@ -22,7 +22,7 @@ const penFit: PublishedFit = {
  *
  * @param z 0 or more; @param matter Omega_m, above 0 and at most 1. Stated to 0.4% from 0.2 (measured 0.39%, as z goes to 0).
  * Source: Pen 1999 (astro-ph/9904172).
- * @example penLuminosityDistance(1, 0.3) // 1.543
+ * @example penLuminosityDistance(1, 0.3) // 1.544
  */
 export function penLuminosityDistance(z: number, matter: number): number {
   const s = Math.cbrt((1 - matter) / matter);

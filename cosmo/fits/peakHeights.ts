@@ -22,7 +22,7 @@ export function firstPeakPhase(ratio: number): number {
  * Height of the second peak over the first: H2 = 0.925 w_m^0.18 2.4^(n-1)/[1 + (w_b/0.0164)^(12 w_m^0.52)]^0.2.
  *
  * @param baryonDensity omega_b; @param matterDensity omega_m; @param spectralIndex n_s. Source: Hu et al. 2001 (memory).
- * @example secondPeakHeightRatio(0.0224, 0.143, 0.965) // 0.45
+ * @example secondPeakHeightRatio(0.0224, 0.143, 0.965) // 0.46
  */
 export function secondPeakHeightRatio(baryonDensity: number, matterDensity: number, spectralIndex: number): number {
   const baryons = 1 + (baryonDensity / 0.0164) ** (12 * matterDensity ** 0.52);
@@ -33,7 +33,7 @@ export function secondPeakHeightRatio(baryonDensity: number, matterDensity: numb
  * Height of the third peak over the first: H3 = 2.17 [1 + (w_b/0.044)^2]^-1 w_m^0.59 3.6^(n-1)/[1 + 1.63 (1 - w_b/0.071) w_m].
  *
  * Arguments as {@link secondPeakHeightRatio}. Source: Hu et al. 2001 (memory).
- * @example thirdPeakHeightRatio(0.0224, 0.143, 0.965) // 0.43
+ * @example thirdPeakHeightRatio(0.0224, 0.143, 0.965) // 0.451
  */
 export function thirdPeakHeightRatio(baryonDensity: number, matterDensity: number, spectralIndex: number): number {
   const baryons = 1 + (baryonDensity / 0.044) ** 2;

@@ -15,6 +15,8 @@ export interface Part<M, T> {
    * is then measured against the coarse evaluation, which must treat that thing in another way.
    */
   approximate?(model: M): boolean;
+  /** Relative error that every number inherits which stands on the part; none unless given. */
+  relativeError?(evaluation: Evaluation<M>): number;
 }
 
 /** `full`: the settings behind the stated accuracies. `coarse`: looser ones, run only to measure the error of the full ones. */

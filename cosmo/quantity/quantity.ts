@@ -173,6 +173,7 @@ export function evaluateQuantity<M>(
   checkArguments(definition, values, place);
   const { value: computed, parts } = evaluation.watch(() => finiteResult(definition, evaluation, values, place));
   let error = Math.abs(computed.error);
+  for (const part of parts) error += (part.relativeError?.(evaluation) ?? 0) * Math.abs(computed.value);
   const approximate = parts.some((part) => part.approximate?.(evaluation.model) === true);
   if ((definition.usesHistory === true || approximate) && evaluation.precision === "full") {
     error += Math.abs(computed.value - definition.compute(evaluation.coarse(), values).value);

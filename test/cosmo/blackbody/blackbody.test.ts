@@ -6,7 +6,7 @@ import {
   wienFrequency,
   wienWavelength,
 } from "../../../cosmo/blackbody";
-import { colorMatching } from "../../../cosmo/blackbody/colorMatching";
+import { colorMatching, firstWavelength, wavelengthStep } from "../../../cosmo/blackbody/colorMatching";
 import { frequencyRoot } from "../../../cosmo/blackbody/wienFrequency";
 import { wavelengthRoot } from "../../../cosmo/blackbody/wienWavelength";
 import { constantsSets, radiationConstant } from "../../../cosmo/constants";
@@ -96,6 +96,9 @@ describe("blackbodyChromaticity", () => {
     expect(sums[1]).toBeCloseTo(21.3713, 4);
     expect(sums[2]).toBeCloseTo(21.3715, 4);
     expect(colorMatching).toHaveLength(81);
+    // Common practice, no source: visible light is 380 to 780 nm.
+    expect(firstWavelength).toBe(380);
+    expect(firstWavelength + wavelengthStep * 80).toBe(780);
   });
 
   it("gives illuminant A: x 0.44758, y 0.40745", () => {

@@ -59,6 +59,14 @@ describe("darkEnergy.equation", () => {
     for (const z of [0.5, 1.5, 9]) {
       const expected = z < 1 ? 1 : ((1 + z) / 2) ** 1.5;
       const a = 1 / (1 + z);
+      const rate = numbers.quantity("hubbleRate", z);
+      expect(rate.error).toBeLessThan(1e-10 * rate.value);
+      const exact =
+        (numbers.model.baryonDensity + numbers.model.coldMatterDensity) * (1 + z) ** 3 +
+        numbers.model.darkEnergyDensity * expected;
+      const rest = numbers.evaluation.once(expansionPart);
+      const relativistic = (rest.radiation + rest.neutrinoTerm(a)) * (1 + z) ** 4;
+      expect(Math.abs(rate.value - 100 * Math.sqrt(exact + relativistic))).toBeLessThan(rate.error);
       expect(relative(expansion.darkEnergyTerm(a) / (numbers.model.darkEnergyDensity * a ** 4), expected)).toBeLessThan(
         1e-11,
       );
