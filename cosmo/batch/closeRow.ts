@@ -89,11 +89,6 @@ export class RowCloser {
     this.gas = gasPerUnit(constants);
   }
 
-  /** Compton rate over T_r^4. */
-  get comptonRate(): number {
-    return this.gas.comptonRate;
-  }
-
   /** Fills the row; false where it is not a plain model inside the validated range. */
   close(index: number, row: BatchRow): boolean {
     const hubbleValue = slotValue(this.hubble, index);

@@ -85,6 +85,8 @@ export function prepareBatch(request: BatchRequest): BatchPlan {
   // Saha equilibrium is not marched; what does not hang on recombination is the engine's all the same.
   const served = fromEngine.map((each) => (tier === "saha" && each?.output.needs.history === true ? undefined : each));
   const needs = needsOf(served.filter((each) => each !== undefined));
+  const allMatter = flat.get("conventions.equalityMatter") === "allMatter";
+  const engine = new RowEngine(constants, tier === "peebles" ? "peebles" : "calibrated", allMatter, needs);
   const single = requests.filter((_, i) => served[i] === undefined);
 
   return {
@@ -94,7 +96,7 @@ export function prepareBatch(request: BatchRequest): BatchPlan {
       checkRows(rows);
       const bound = bindColumns(columns, shared, rows.to);
       requireStructure(bound);
-      const engine = new RowEngine(bound, constants, tier === "peebles" ? "peebles" : "calibrated", needs);
+      engine.bind(bound);
       const path = new SinglePath(bound, request.closeModel, problems);
       const targets = requests.map((each) => outputColumn(out, each.text, rows.to));
       const readers: EngineOutput["read"][] = [];

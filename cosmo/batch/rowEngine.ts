@@ -3,7 +3,7 @@ import { AtomMarch } from "./atomMarch";
 import { atomTables } from "./atomTables";
 import type { BoundColumns } from "./batchColumns";
 import { BatchRow } from "./batchRow";
-import { RowCloser } from "./closeRow";
+import { gasPerUnit, RowCloser } from "./closeRow";
 import { GridDamping } from "./gridDamping";
 import { GridDepths } from "./gridDepths";
 import { GridExpansion } from "./gridExpansion";
@@ -22,7 +22,7 @@ export interface EngineNeeds {
   readonly redshifts: readonly number[] | undefined;
 }
 
-/** All that is computed of one row; one object serves every row of a run. */
+/** All that is computed of one row; one object serves every row of a plan. */
 export class RowEngine {
   readonly row = new BatchRow();
   readonly horizons = new Horizons();
@@ -31,27 +31,29 @@ export class RowEngine {
   lastScatteringRedshift = 0.5;
   dragRedshift = 0.5;
   dampingWavenumber = 0.5;
-  private readonly allMatter: boolean;
   private readonly scaleFactor = new Float64Array(1);
   private readonly logScaleFactor = new Float64Array(1);
   private readonly term = new Float64Array(1);
-  private readonly closer: RowCloser;
+  private closer: RowCloser | undefined;
   private readonly expansion = new GridExpansion();
   private readonly march: AtomMarch;
   private readonly depths = new GridDepths();
   private readonly damping: GridDamping;
 
   constructor(
-    bound: BoundColumns,
     readonly constants: ConstantsSet,
     tier: "peebles" | "calibrated",
+    private readonly allMatter: boolean,
     private readonly needs: EngineNeeds,
   ) {
-    this.allMatter = bound.words.get("conventions.equalityMatter") === "allMatter";
-    this.closer = new RowCloser(bound, constants);
-    this.march = new AtomMarch(atomTables(tier, constants), this.closer.comptonRate);
+    this.march = new AtomMarch(atomTables(tier, constants), gasPerUnit(constants).comptonRate);
     this.damping = new GridDamping(constants);
     this.ladder = new RedshiftLadder(needs.redshifts ?? []);
+  }
+
+  /** Takes the columns that the next rows come from. */
+  bind(bound: BoundColumns): void {
+    this.closer = new RowCloser(bound, this.constants);
   }
 
   /** a at equality. */
@@ -73,7 +75,7 @@ export class RowEngine {
   /** Computes a row; a status other than `engine` says why it has to take the single path. */
   compute(index: number): number {
     const { row, needs } = this;
-    if (!this.closer.close(index, row)) return rowStatus.outsideRange;
+    if (this.closer === undefined || !this.closer.close(index, row)) return rowStatus.outsideRange;
     if (!staysExpanding(row)) return rowStatus.nearTurningPoint;
     if (needs.redshifts !== undefined) this.ladder.run(row);
     if (needs.history) {
