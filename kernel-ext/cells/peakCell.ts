@@ -69,7 +69,7 @@ export function peakCell(model: ModelGivens): CellResult<PeakValues> {
   const beside = table({
     title: "Beside the measured positions (Planck 2018 I, 68% errors, from memory)",
     columns: [
-      { key: "peak", label: "peak" },
+      { key: "peak", label: "peak", symbols: true },
       { key: "model", label: "this model, by the fits", digits: 5 },
       { key: "measured", label: "measured", align: "right" },
       { key: "difference", label: "difference", unit: "%", digits: 2 },
