@@ -5,6 +5,9 @@ export { evaluateModel, type ModelNumbers } from "../cosmo/solve";
 export {
   type AcousticScaleValues,
   acousticScaleCell,
+  type ChainCellOptions,
+  type ChainValues,
+  chainCell,
   type DistanceCellOptions,
   type DistanceValues,
   distanceCell,

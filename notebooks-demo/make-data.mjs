@@ -67,3 +67,59 @@ for (let i = 0; i + 1 < edges.length; i++) {
 
 const folder = process.argv[2] ?? dirname(fileURLToPath(import.meta.url));
 writeFileSync(join(folder, "saltmarsh-pilot.csv"), `${lines.join("\n")}\n`);
+
+// ---- a chain of the planned survey
+
+/** Steps of the chain, and where it starts: off the place where it will stay, so that there is something to leave out. */
+const steps = 9000;
+const chainStart = [66.2, 0.0221, 0.1245];
+
+/** Centers, errors and correlations of the invented posterior: H0 in km/s/Mpc, omega_b, omega_c. */
+const center = [68.0, 0.02236, 0.1193];
+const errors = [0.45, 0.00013, 0.001];
+const correlations = [
+  [1, 0.45, -0.8],
+  [0.45, 1, -0.4],
+  [-0.8, -0.4, 1],
+];
+
+/** Normal numbers (Box & Muller 1958). */
+const normal = () => Math.sqrt(-2 * Math.log(1 - uniform())) * Math.cos(2 * Math.PI * uniform());
+
+/** The inverse of a symmetric 3 by 3 matrix, by cofactors. */
+function inverse([[a, b, c], [, d, e], [, , f]]) {
+  const determinant = a * (d * f - e * e) - b * (b * f - c * e) + c * (b * e - c * d);
+  const cofactors = [
+    [d * f - e * e, c * e - b * f, b * e - c * d],
+    [c * e - b * f, a * f - c * c, b * c - a * e],
+    [b * e - c * d, b * c - a * e, a * d - b * b],
+  ];
+  return cofactors.map((row) => row.map((each) => each / determinant));
+}
+
+const precision = inverse(correlations);
+
+/** Minus two times the logarithm of the invented posterior, but for a constant. */
+function misfit(point) {
+  const pulls = point.map((value, i) => (value - center[i]) / errors[i]);
+  return pulls.reduce((sum, p, i) => sum + pulls.reduce((inner, q, j) => inner + p * precision[i][j] * q, 0), 0);
+}
+
+// Metropolis et al. 1953: a step is taken when it fits better, else with the ratio of the posteriors; a state that stays is one row with the number of
+// its repeats as weight.
+const chain = ["# Invented: a chain of the Saltmarsh forecast (make-data.mjs)", "weight,H0,omegab,omegac,misfit"];
+let state = chainStart;
+let fit = misfit(state);
+let repeats = 1;
+const writeState = () =>
+  chain.push([repeats, state[0].toFixed(4), state[1].toFixed(7), state[2].toFixed(6), fit.toFixed(3)].join(","));
+for (let step = 0; step < steps; step++) {
+  const proposal = state.map((value, i) => value + 0.5 * errors[i] * normal());
+  const proposedFit = misfit(proposal);
+  if (uniform() < Math.exp((fit - proposedFit) / 2)) {
+    writeState();
+    [state, fit, repeats] = [proposal, proposedFit, 1];
+  } else repeats++;
+}
+writeState();
+writeFileSync(join(folder, "saltmarsh-chain.csv"), `${chain.join("\n")}\n`);

@@ -1,6 +1,7 @@
-import { DomainError, describeValue, UnknownNameError } from "../../cosmo/errors";
-import { type ModelGivens, modelFieldByName } from "../../cosmo/model";
-import { findQuantity, parseRequest, parseRequests, quantityRegister } from "../../cosmo/quantities";
+import { DomainError } from "../../cosmo/errors";
+import type { ClosedModel, ModelGivens } from "../../cosmo/model";
+import { findQuantity } from "../../cosmo/quantities";
+import { closeModel } from "../../cosmo/solve";
 import { citation } from "../../cosmo/sources";
 import {
   burnInRows,
@@ -12,9 +13,11 @@ import {
   markedRows,
   summarizeColumn,
 } from "../chain";
-import { type CellResult, cellOutput, formatNumber, progress, type SourceLine, type Table, table } from "../display";
-import { type BatchAccuracy, type BatchRun, runBatch, type WorkerRequest } from "../workers";
-import { type ChainColumn, chainCharts } from "./chainCharts";
+import { type CellResult, cellOutput, formatNumber, progress, type SourceLine } from "../display";
+import { type BatchAccuracy, type BatchRun, rowGivens, runBatch, type WorkerRequest } from "../workers";
+import { type ChainColumn, chainCharts } from "./chain/chainCharts";
+import { labelOf, settingsTable, summaryTable } from "./chain/chainTables";
+import { type ColumnPlan, planColumns, requestsOf } from "./chain/planColumns";
 import { checkOptions } from "./checkOptions";
 
 /** Options of {@link chainCell}. */
@@ -91,11 +94,20 @@ export async function chainCell(chain: ChainInput, options: ChainCellOptions = {
   const rows = loaded.rows - dropped;
   const kept = (column: string): Float64Array => loaded.columns.get(column)!.subarray(dropped);
   const allWeights = weightColumn === undefined ? undefined : loaded.columns.get(weightColumn)!;
-  if (allWeights !== undefined) checkWeights(allWeights, weightColumn!, where);
+  if (allWeights !== undefined) checkWeights(allWeights, dropped, weightColumn!, where);
   const weights = allWeights?.subarray(dropped);
 
   const columns: ChainValues["columns"] = {};
   for (const [column, name] of names) columns[name] = kept(column);
+  const taken = requests.find(({ text }) => columns[text] !== undefined);
+  if (taken !== undefined) {
+    throw new DomainError({
+      where,
+      argument: "add",
+      rule: "must not name a column that the chain gives",
+      value: taken.text,
+    });
+  }
   const request: WorkerRequest = {
     outputs: requests.map((each) => each.text),
     shared: options.shared,
@@ -121,6 +133,7 @@ export async function chainCell(chain: ChainInput, options: ChainCellOptions = {
       value: 0,
     });
   }
+  const model = run === undefined ? undefined : firstModel(request, givenColumns(plan!, columns), used);
   const usedWeights = weights === undefined ? undefined : markedRows(weights, used, usedRows);
   const described: ChainColumn[] = Object.entries(columns).map(([name, column]) => {
     const values = markedRows(column, used, usedRows);
@@ -150,102 +163,29 @@ export async function chainCell(chain: ChainInput, options: ChainCellOptions = {
   return cellOutput({
     title: typeof chain === "string" ? `Chain ${chain}` : "Chain",
     summary: `${formatNumber(usedRows, { digits: "all" })} rows, at least ${formatNumber(Math.round(smallest), { digits: "all" })} effective${derivedNames.length === 0 ? "" : `; derived: ${derivedNames.join(", ")}`}`,
-    tables: [summaryTable(described), settingsTable(loaded.rows, dropped, usedRows, plan!, options, reached)],
+    tables: [summaryTable(described), settingsTable(loaded.rows, dropped, usedRows, plan!, options, reached, model)],
     charts: chainCharts(varying, usedWeights, matrix, derivedNames, options.regions),
     notes: notesOf(run, usedRows, rows, values, hubbleFrom, reached),
-    sources: sources(requests.map(({ name }) => name)),
+    sources: sources(
+      requests.map(({ name }) => name),
+      model,
+    ),
     values,
   });
 }
 
-interface ColumnPlan {
-  /** Columns of the chain to their names in the vocabulary, or their own. */
-  readonly columns: ReadonlyMap<string, string>;
-  /** The fields among the names. */
-  readonly fields: readonly string[];
-  readonly weights: string | undefined;
-  readonly hubbleFrom: string | undefined;
+/** The columns that make the models. */
+function givenColumns(
+  { fields, hubbleFrom }: ColumnPlan,
+  columns: ChainValues["columns"],
+): Record<string, Float64Array> {
+  const names = hubbleFrom === undefined ? fields : [...fields, hubbleFrom];
+  return Object.fromEntries(names.map((name) => [name, columns[name]!]));
 }
 
-function requestsOf(add: ChainCellOptions["add"]): { text: string; name: string }[] {
-  if (add === undefined) return [];
-  const requests = typeof add === "string" ? parseRequests(add, where) : add.map((each) => parseRequest(each, where));
-  const texts = requests.map(({ text }) => text);
-  const twice = texts.find((text, index) => texts.indexOf(text) !== index);
-  if (twice !== undefined)
-    throw new DomainError({ where, argument: "add", rule: "must not ask twice for one quantity", value: twice });
-  return requests;
-}
-
-function planColumns(names: readonly string[], options: ChainCellOptions, deriving: boolean): ColumnPlan {
-  const { map = {}, also = [] } = options;
-  const isDerived = (name: string): boolean =>
-    !modelFieldByName.has(name) && quantityRegister.get(name)?.arguments.length === 0;
-  const columns = new Map<string, string>();
-  const fields: string[] = [];
-  let hubbleFrom: string | undefined;
-  for (const [column, name] of Object.entries(map)) {
-    if (!names.includes(column))
-      throw new UnknownNameError({ where: `${where}: map`, kind: "column of the chain", given: column, known: names });
-    if (!modelFieldByName.has(name) && !isDerived(name)) {
-      throw new UnknownNameError({
-        where: `${where}: map`,
-        kind: "parameter",
-        given: name,
-        known: [...modelFieldByName.keys()],
-      });
-    }
-  }
-  const nameOf = (column: string): string => map[column] ?? column;
-  const weights = options.weights ?? (names.includes("weight") ? "weight" : undefined);
-  const hasHubble = names.some((column) => ["hubble", "reducedHubble"].includes(nameOf(column)));
-  const sharedHubble = options.shared?.hubble !== undefined || options.shared?.reducedHubble !== undefined;
-  const derived = names.filter((column) => isDerived(nameOf(column)));
-  for (const column of names) {
-    const name = nameOf(column);
-    if (column === weights) continue;
-    if (modelFieldByName.get(name)?.kind === "number" || modelFieldByName.get(name)?.kind === "numberOrChoice") {
-      if (fields.includes(name))
-        throw new DomainError({
-          where,
-          argument: "chain",
-          rule: `must give ${name} in one column only`,
-          value: column,
-        });
-      fields.push(name);
-      columns.set(column, name);
-    }
-  }
-  if (deriving && !hasHubble && !sharedHubble) {
-    const [only] = derived;
-    if (derived.length === 1) {
-      hubbleFrom = nameOf(only!);
-      columns.set(only!, hubbleFrom);
-    } else if (derived.length > 1) {
-      const list = derived.map(describeValue).join(", ");
-      throw new DomainError({
-        where,
-        argument: "chain",
-        rule: `must give hubble, or one derived number in its place and not ${list}`,
-        value: undefined,
-      });
-    }
-  }
-  for (const column of also) {
-    if (!names.includes(column))
-      throw new UnknownNameError({ where: `${where}: also`, kind: "column of the chain", given: column, known: names });
-    if (!columns.has(column)) columns.set(column, column);
-  }
-  if (columns.size === 0) {
-    const list = names.map(describeValue).join(", ");
-    throw new DomainError({
-      where,
-      argument: "chain",
-      rule: `must have a column by the vocabulary's names (map renames, also takes others along); it has ${list}`,
-      value: undefined,
-    });
-  }
-  return { columns, fields, weights, hubbleFrom };
+/** The model of the first row that gives one: conventions and sources are the same for all. */
+function firstModel(request: WorkerRequest, given: Record<string, Float64Array>, used: Uint8Array): ClosedModel {
+  return closeModel(rowGivens(request, given, used.length)(used.indexOf(1)), { where });
 }
 
 async function derive(
@@ -255,19 +195,7 @@ async function derive(
   rows: number,
   { workers, signal }: ChainCellOptions,
 ): Promise<BatchRun> {
-  for (const { name } of request.outputs.map((text) => parseRequest(text, where))) {
-    if (plan.fields.includes(name)) {
-      throw new DomainError({
-        where,
-        argument: "add",
-        rule: "must not name a parameter that the chain gives",
-        value: name,
-      });
-    }
-  }
-  const given = Object.fromEntries(
-    [...plan.fields, ...(plan.hubbleFrom === undefined ? [] : [plan.hubbleFrom])].map((name) => [name, columns[name]!]),
-  );
+  const given = givenColumns(plan, columns);
   const bar = rows > 256 ? progress({ label: "Derived columns", total: rows, unit: "models" }) : undefined;
   try {
     const run = await runBatch(request, given, { workers, signal, onProgress: (done) => bar?.update(done) });
@@ -277,109 +205,6 @@ async function derive(
     bar?.interrupted();
     throw error;
   }
-}
-
-function labelOf(name: string): { symbol: string; unit: string } {
-  const field = modelFieldByName.get(name);
-  if (field !== undefined) return { symbol: field.symbol, unit: field.unit };
-  const base = name.replace(/\(.*$/, "");
-  if (!quantityRegister.has(base)) return { symbol: name, unit: "" };
-  const quantity = findQuantity(base, where);
-  const values = /\((.*)\)$/.exec(name)?.[1];
-  if (values === undefined) return { symbol: quantity.symbol, unit: quantity.unit };
-  return { symbol: `${quantity.symbol.replace(/\(.*\)$/, "")}(${values})`, unit: quantity.unit };
-}
-
-/** Digits down to a hundredth of the standard deviation. */
-function digitsOf(value: number, deviation: number): string {
-  if (!(deviation > 0) || value === 0) return formatNumber(value, { digits: value === 0 ? "all" : 8 });
-  const digits = Math.ceil(Math.log10(Math.abs(value) / deviation)) + 2;
-  return formatNumber(value, { digits: Math.max(2, Math.min(12, digits)) });
-}
-
-function summaryTable(columns: readonly ChainColumn[]): Table {
-  return table({
-    title: "Posterior",
-    columns: [
-      { key: "name", label: "column" },
-      { key: "symbol", label: "symbol", symbols: true },
-      { key: "unit", label: "unit", symbols: true },
-      { key: "mean", label: "mean", align: "right" },
-      { key: "deviation", label: "standard deviation", align: "right" },
-      { key: "median", label: "median", align: "right" },
-      { key: "interval68", label: "68% interval", align: "right" },
-      { key: "interval95", label: "95% interval", align: "right" },
-      { key: "effectiveSize", label: "effective samples", align: "right" },
-    ],
-    rows: columns.map(({ name, symbol, unit, summary }) => {
-      const digits = (value: number): string => digitsOf(value, summary.deviation);
-      const interval = ([low, high]: readonly [number, number]): string => `${digits(low)} to ${digits(high)}`;
-      return {
-        name,
-        symbol,
-        unit,
-        mean: digits(summary.mean),
-        deviation: formatNumber(summary.deviation, { digits: 3 }),
-        median: digits(summary.median),
-        interval68: interval(summary.interval68),
-        interval95: interval(summary.interval95),
-        effectiveSize: formatNumber(Math.round(summary.effectiveSize), { digits: "all" }),
-      };
-    }),
-    notes: [
-      "intervals are equal-tailed: 16% and 84%, 2.5% and 97.5% of the weight lie below their ends",
-      "effective samples: so many independent ones would fix the mean as well (autocorrelation along the chain, and weights)",
-    ],
-  });
-}
-
-function settingsTable(
-  all: number,
-  dropped: number,
-  used: number,
-  plan: ColumnPlan,
-  options: ChainCellOptions,
-  reached: string | undefined,
-): Table {
-  const count = (value: number): string => formatNumber(value, { digits: "all" });
-  const renamed = [...plan.columns]
-    .filter(([column, name]) => column !== name)
-    .map(([column, name]) => `${column} is ${name}`);
-  const rows = [
-    { what: "rows of the chain", value: count(all) },
-    { what: "left out as burn-in", value: count(dropped) },
-    { what: "summed up", value: count(used) },
-    { what: "weights", value: plan.weights === undefined ? "none: all rows count the same" : `column ${plan.weights}` },
-    ...(renamed.length === 0 ? [] : [{ what: "renamed", value: renamed.join(", ") }]),
-    ...(reached === undefined ? [] : [{ what: "accuracy of the derived columns", value: reached }]),
-    ...sharedRows(options.shared ?? {}),
-  ];
-  return table({
-    title: "What was done",
-    columns: [
-      { key: "what", label: "" },
-      { key: "value", label: "" },
-    ],
-    rows,
-  });
-}
-
-/** The shared givens and the conventions in force, so that the numbers can be had again. */
-function sharedRows(shared: ModelGivens): { what: string; value: string }[] {
-  const given: string[] = [];
-  const walk = (prefix: string, object: object): void => {
-    for (const [name, value] of Object.entries(object)) {
-      if (typeof value === "object" && value !== null && !Array.isArray(value)) walk(`${prefix}${name}.`, value);
-      else given.push(`${prefix}${name} = ${Array.isArray(value) ? value.join(";") : String(value)}`);
-    }
-  };
-  walk("", shared);
-  return [
-    {
-      what: "shared by all rows",
-      value: given.length === 0 ? "the defaults" : `${given.join(", ")}; the rest by default`,
-    },
-  ];
 }
 
 function reachedAccuracy(run: BatchRun | undefined, accuracy: BatchAccuracy | undefined): string | undefined {
@@ -414,8 +239,11 @@ function notesOf(
   return notes;
 }
 
-function sources(names: readonly string[]): SourceLine[] {
-  const physics = names.flatMap((name) => findQuantity(name, where).sources);
+function sources(names: readonly string[], model: ClosedModel | undefined): SourceLine[] {
+  const physics = names.flatMap((name) => {
+    const { sources } = findQuantity(name, where);
+    return typeof sources !== "function" ? sources : model === undefined ? [] : sources(model);
+  });
   const keys = [...new Set(physics)].map((key) => ({ key, citation: citation(key) }));
   return [
     ...keys,

@@ -1,4 +1,5 @@
 export { type AcousticScaleValues, acousticScaleCell } from "./acousticScaleCell";
+export { type ChainCellOptions, type ChainValues, chainCell } from "./chainCell";
 export { type DistanceCellOptions, type DistanceValues, distanceCell } from "./distanceCell";
 export { type ExpansionCellOptions, type ExpansionValues, expansionCell } from "./expansionCell";
 export { type LastScatteringValues, lastScatteringCell } from "./lastScatteringCell";

@@ -7,7 +7,7 @@ const signatures: readonly { bytes: readonly number[]; reason: string; hint: str
     reason: "is compressed (gzip)",
     hint: "decompress it first, for example with gzip -dc, and read standard input",
   },
-  { bytes: [0x50, 0x41, 0x52, 0x31], reason: "is a Parquet file", hint: "write it as csv or jsonl first" },
+  { bytes: [0x50, 0x41, 0x52, 0x31], reason: "is a Parquet file", hint: "name it .parquet" },
   { bytes: [0x50, 0x4b, 0x03, 0x04], reason: "is a ZIP archive or a spreadsheet", hint: "save the table as csv first" },
   { bytes: [0xff, 0xfe], reason: "is UTF-16 text", hint: "convert it to UTF-8 first, for example with iconv" },
   { bytes: [0xfe, 0xff], reason: "is UTF-16 text", hint: "convert it to UTF-8 first, for example with iconv" },

@@ -1,6 +1,7 @@
 export { type ParsedNumber, parseNumber } from "./parseNumber";
 export { type OpenedFile, openFile } from "./readFile";
 export { readParquet } from "./readParquet";
+export { readSpaced } from "./readSpaced";
 export { type RowProblem, shownPiece, TableError, type TableErrorFields } from "./tableError";
 export { formatByName, formatOfFile, knownFormats, type TableFormat } from "./tableFormat";
 export { type TableOutput, type TableOutputOptions, tableOutput } from "./tableOutput";
