@@ -13,3 +13,9 @@ export const predictionWeights = Float64Array.of(6, -15, 20, -15, 6, -1);
 
 /** Points that the formula looks back at. */
 export const lookBack = 6;
+
+/** The same of fourth order, for the gas temperature: (48 d_1 - 36 d_2 + 16 d_3 - 3 d_4 + 12 h d'_n)/25. */
+export const coolingWeights = Float64Array.of(48, -36, 16, -3).map((weight) => weight / 25);
+
+/** 12/25, weight of h d'_n. */
+export const coolingSlopeWeight = 12 / 25;

@@ -2,7 +2,7 @@ import { atoms } from "../constants";
 import { hundredKmPerSecondPerMpc } from "../model";
 import type { MarchState } from "./atomMarch";
 import { coldPointsPerRoot, hydrogenColumns } from "./atomTables";
-import { pastWeights, predictionWeights, slopeWeight } from "./backwardDifferences";
+import { coolingSlopeWeight, coolingWeights, pastWeights, predictionWeights, slopeWeight } from "./backwardDifferences";
 import type { BatchRow } from "./batchRow";
 import { gridBlocks, gridStep, gridTemperatures, heliumEnd } from "./temperatureGrid";
 
@@ -23,10 +23,11 @@ export function marchHydrogen(state: MarchState, b: number, row: BatchRow, inver
   const c4 = pastWeights[3];
   const c5 = pastWeights[4];
   const c6 = pastWeights[5];
-  const t1 = 48 / 25;
-  const t2 = -36 / 25;
-  const t3 = 16 / 25;
-  const t4 = -3 / 25;
+  // Fourth order is enough for d, which is a correction of 1e-5 while ionization changes fast.
+  const t1 = coolingWeights[0];
+  const t2 = coolingWeights[1];
+  const t3 = coolingWeights[2];
+  const t4 = coolingWeights[3];
   const p1 = predictionWeights[0];
   const p2 = predictionWeights[1];
   const p3 = predictionWeights[2];
@@ -38,7 +39,7 @@ export function marchHydrogen(state: MarchState, b: number, row: BatchRow, inver
   const density = row.hydrogenDensity / row.photonTemperature ** 3;
   const others = 1 + row.heliumRatio;
   const step = stride * gridStep * slopeWeight;
-  const thermalStep = (step * 12) / 25 / slopeWeight;
+  const thermalStep = (step * coolingSlopeWeight) / slopeWeight;
   const weight = step / hundredKmPerSecondPerMpc;
   const twoPhoton = atoms.hydrogenTwoPhotonRate;
   // At a block's beginning the points of the finer block stand in, every second of them.
@@ -64,6 +65,7 @@ export function marchHydrogen(state: MarchState, b: number, row: BatchRow, inver
     const pastX = c1 * x1 + (c2 * x2 + c3 * x3 + (c4 * x4 + c5 * x5 + c6 * x6));
     let x = p1 * x1 + (p2 * x2 + p3 * x3 + (p4 * x4 + p5 * x5 + p6 * x6));
     const pastD = t1 * d1 + (t2 * d2 + (t3 * d3 + t4 * d4));
+    // Two steps ahead of the last known: that point's d then stands off the chain from point to point.
     const predictedD = 21 * d2 - 70 * d3 + (105 * d4 - 84 * d5) + (35 * d6 - 6 * d7);
 
     let recombination = density * rates[at];

@@ -2,7 +2,7 @@ import { atoms } from "../constants";
 import { hundredKmPerSecondPerMpc } from "../model";
 import type { MarchState } from "./atomMarch";
 import { heliumColumns, hydrogenColumns } from "./atomTables";
-import { pastWeights, predictionWeights, slopeWeight } from "./backwardDifferences";
+import { coolingSlopeWeight, coolingWeights, pastWeights, predictionWeights, slopeWeight } from "./backwardDifferences";
 import type { BatchRow } from "./batchRow";
 import { equilibriumPoints, gridStep, heliumEnd, mainFirst } from "./temperatureGrid";
 
@@ -51,10 +51,11 @@ export function marchWithHelium(state: MarchState, row: BatchRow, inverseRate: F
   const c4 = pastWeights[3];
   const c5 = pastWeights[4];
   const c6 = pastWeights[5];
-  const t1 = 48 / 25;
-  const t2 = -36 / 25;
-  const t3 = 16 / 25;
-  const t4 = -3 / 25;
+  // Fourth order is enough for d, which is a correction of 1e-5 while ionization changes fast.
+  const t1 = coolingWeights[0];
+  const t2 = coolingWeights[1];
+  const t3 = coolingWeights[2];
+  const t4 = coolingWeights[3];
   const p1 = predictionWeights[0];
   const p2 = predictionWeights[1];
   const p3 = predictionWeights[2];
@@ -64,7 +65,7 @@ export function marchWithHelium(state: MarchState, row: BatchRow, inverseRate: F
   const density = row.hydrogenDensity / row.photonTemperature ** 3;
   const ratio = row.heliumRatio;
   const step = gridStep * slopeWeight;
-  const thermalStep = (step * 12) / 25 / slopeWeight;
+  const thermalStep = (step * coolingSlopeWeight) / slopeWeight;
   const weight = step / hundredKmPerSecondPerMpc;
   const twoPhoton = atoms.hydrogenTwoPhotonRate;
   const last = mainFirst + equilibriumPoints - 1;
