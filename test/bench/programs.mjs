@@ -204,7 +204,12 @@ export function timePrograms(say, short) {
       samples: times,
     };
   });
-  return { rounds: sizes.rounds, comparison, timed, oneModel: { first: one[0], later: one[1] } };
+  return {
+    rounds: sizes.rounds,
+    comparison,
+    timed,
+    oneModel: { first: { wall: one[0], processor: one[1] }, later: { wall: one[2], processor: one[3] } },
+  };
 }
 
 /** The two tables, as rows of cells. */

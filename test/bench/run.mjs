@@ -139,18 +139,17 @@ if (programs !== undefined) {
       inverse((t) => t.processor),
     );
   }
-  goal("one model by the engine, later calls", "under 1 ms", ms(programs.oneModel.later));
+  const { later } = programs.oneModel;
+  goal("one model by the engine, later calls", "under 1 ms", ms(later.wall), ms(later.processor));
 }
 if (scaling !== undefined) {
   const last = scaling[scaling.length - 1];
   goal(`two workers over one, ${last.rows} rows`, "1.8 or more", ratio(last.speedup), ratio(last.speedupByProcessor));
 }
 if (derive !== undefined) {
-  const scale = 1e6 / derive.rows;
-  const note = scale === 1 ? "" : ` (of ${derive.rows}, scaled)`;
+  const reach = derive.rows === 1_000_000 ? "30 s or less" : "30 s for a million";
   // By processor time: what two cores that do nothing else would take at best.
-  const best = (derive.processor / 2) * scale;
-  goal(`a million rows through derive${note}`, "30 s or less", seconds(derive.wall * scale), seconds(best));
+  goal(`${derive.rows} rows through derive`, reach, seconds(derive.wall), seconds(derive.processor / 2));
   goal("its peak memory", "under 500 MB", megabytes(derive.memory));
   const gsl = programs?.timed.find((each) => each.key === "gsl");
   if (gsl !== undefined) {
@@ -159,8 +158,8 @@ if (derive !== undefined) {
   }
 }
 if (single !== undefined) {
-  goal("one model in full, first call", "60 ms", ms(single.first));
-  goal("one model in full, later calls", "15 ms", ms(single.later));
+  goal("one model in full, first call", "60 ms", ms(single.first), ms(single.processor.first));
+  goal("one model in full, later calls", "15 ms", ms(single.later), ms(single.processor.later));
 }
 if (goals.length > 0) print([["what it must reach", "reach", "by the clock", "by processor"], ...goals]);
 process.stdout.write(

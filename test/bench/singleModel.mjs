@@ -1,6 +1,6 @@
 /** How fast one model after another gets its full suite on one core, by the path that cells take. */
 import { Bench } from "tinybench";
-import { built, modelNumber, suite } from "./suite.mjs";
+import { built, median, modelNumber, suite } from "./suite.mjs";
 
 /** @param time milliseconds of measuring. */
 export async function timeSingleModel(time) {
@@ -14,12 +14,22 @@ export async function timeSingleModel(time) {
       if (!Number.isFinite(numbers.value(name))) throw new Error(`${name} is not finite`);
     }
   };
+  const processorTime = (work) => {
+    const before = process.cpuUsage();
+    work();
+    const { user, system } = process.cpuUsage(before);
+    return (user + system) / 1000;
+  };
   const beforeFirst = performance.now();
-  oneModel();
+  const firstProcessor = processorTime(oneModel);
   const first = performance.now() - beforeFirst;
   const bench = new Bench({ time, warmupTime: time / 2 });
   bench.add("full suite", oneModel);
   await bench.run();
   const { latency } = bench.tasks[0].result;
-  return { load, first, later: latency.p50, models: latency.samplesCount, perSecond: 1000 / latency.mean };
+  const processor = {
+    first: firstProcessor,
+    later: median(Array.from({ length: 30 }, () => processorTime(oneModel))),
+  };
+  return { load, first, processor, later: latency.p50, models: latency.samplesCount, perSecond: 1000 / latency.mean };
 }
