@@ -1,12 +1,11 @@
 /** A client that starts a kernel of its own and runs code in it over ZeroMQ, without Jupyter. */
 import { type ChildProcess, spawn } from "node:child_process";
 import { randomUUID } from "node:crypto";
-import { mkdtempSync, rmSync, writeFileSync } from "node:fs";
-import { createServer } from "node:net";
-import { tmpdir } from "node:os";
+import { rmSync } from "node:fs";
 import { join } from "node:path";
 import * as zmq from "zeromq";
 import { type ConnectionInfo, type JsonObject, socketAddress, WireCodec, type WireMessage } from "../kernel/wire";
+import { newConnection } from "./newConnection";
 
 /** How a kernel is started; `{connection_file}` is replaced as in a kernelspec. */
 export interface KernelCommand {
@@ -30,23 +29,6 @@ const portTakenExitCode = 98;
 const startAttempts = 3;
 const startTimeout = 60_000;
 const askAgainAfter = 3000;
-
-async function freePorts(count: number): Promise<number[]> {
-  const servers = await Promise.all(
-    Array.from(
-      { length: count },
-      () =>
-        new Promise<ReturnType<typeof createServer>>((resolve, reject) => {
-          const server = createServer();
-          server.once("error", reject);
-          server.listen(0, "127.0.0.1", () => resolve(server));
-        }),
-    ),
-  );
-  const ports = servers.map((server) => (server.address() as { port: number }).port);
-  await Promise.all(servers.map((server) => new Promise((resolve) => server.close(resolve))));
-  return ports;
-}
 
 export interface ExecuteOptions {
   /** The id of the request, where the caller must know it before anything is published. */
@@ -112,22 +94,7 @@ export class KernelClient {
   }
 
   private static async launch(command: KernelCommand): Promise<KernelClient> {
-    const [shell_port, iopub_port, stdin_port, control_port, hb_port] = await freePorts(5);
-    const info: ConnectionInfo = {
-      transport: "tcp",
-      ip: "127.0.0.1",
-      shell_port,
-      iopub_port,
-      stdin_port,
-      control_port,
-      hb_port,
-      key: randomUUID(),
-      signature_scheme: "hmac-sha256",
-      kernel_name: "cosmology-cells",
-    };
-    const folder = mkdtempSync(join(tmpdir(), "cosmology-cells-"));
-    const file = join(folder, "connection.json");
-    writeFileSync(file, JSON.stringify(info), { mode: 0o600, flag: "wx" });
+    const { info, folder, file } = await newConnection();
     const [program, ...args] = command.argv.map((part) => part.replace("{connection_file}", file));
     const child = spawn(program, args, { cwd: command.cwd, stdio: ["ignore", "ignore", "pipe"] });
     const identity = randomUUID();

@@ -1,26 +1,18 @@
 /** The kernel behind the sockets: what each request is answered with and what is published meanwhile. */
-import { version as tslabVersion } from "tslab/package.json";
 import type { MimeBundle } from "../display/sink";
+import { completion, inspection, kernelInfo, requiredText } from "./answers";
 import { type CellContext, currentContext, InterruptError, leaveContext } from "./cellContext";
-import { type CellError, describeThrown } from "./cellError";
+import { describeThrown } from "./cellError";
 import type { CellOutcome, CellRunner } from "./cellRunner";
-import { pointsFromUnits, unitsFromPoints } from "./cursor";
 import { History } from "./history";
-import { portableBundle } from "./mimeBundle";
 import { sleep } from "./ownTimers";
+import type { Publisher } from "./publisher";
 import type { SendQueue } from "./sendQueue";
-import {
-  type Frame,
-  type JsonObject,
-  type MessageHeader,
-  protocolVersion,
-  type WireCodec,
-  type WireMessage,
-} from "./wire";
+import type { Frame, JsonObject, MessageHeader, WireCodec, WireMessage } from "./wire";
 
 export interface KernelParts {
   codec: WireCodec;
-  iopub: SendQueue;
+  publisher: Publisher;
   shell: SendQueue;
   runner: CellRunner;
   version: string;
@@ -56,25 +48,7 @@ export class Kernel {
 
   constructor(private readonly parts: KernelParts) {}
 
-  // ---- publishing
-
-  private publish(type: string, content: JsonObject, parent: MessageHeader | undefined, metadata?: JsonObject): void {
-    const frames = this.parts.codec.compose(type, content, {
-      parent,
-      identities: [Buffer.from(type)],
-      ...(metadata ? { metadata } : {}),
-    });
-    this.parts.iopub.push(frames);
-  }
-
-  publishStatus(state: "starting" | "busy" | "idle", parent?: MessageHeader): void {
-    this.publish("status", { execution_state: state }, parent);
-  }
-
-  private publishError(error: CellError, parent: MessageHeader): void {
-    const { ename, evalue, traceback, place } = error;
-    this.publish("error", { ename, evalue, traceback }, parent, place && { line: place.line, column: place.column });
-  }
+  // ---- output of running code
 
   /** The cell that code belongs to when nothing better is known: the one that runs, or ran last. */
   lastCell(): CellContext | undefined {
@@ -93,25 +67,14 @@ export class Kernel {
     const context = this.outputCell();
     if (!context) return false;
     if (context.silent || text === "") return true;
-    this.parts.iopub.pushText(context.parent, name, text, (merged) =>
-      this.parts.codec.compose(
-        "stream",
-        { name, text: merged },
-        { parent: context.parent, identities: [Buffer.from("stream")] },
-      ),
-    );
+    this.parts.publisher.text(name, text, context.parent);
     return true;
   }
 
   /** Publishes a display, or the new content of one that was shown under the same id. */
-  display(bundle: MimeBundle, displayId: string | undefined, update: boolean, metadata: JsonObject = {}): void {
+  display(bundle: MimeBundle, displayId: string | undefined, update: boolean): void {
     const context = this.outputCell();
-    if (!context || context.silent) return;
-    this.publish(
-      update ? "update_display_data" : "display_data",
-      { data: portableBundle(bundle), metadata, transient: displayId === undefined ? {} : { display_id: displayId } },
-      context.parent,
-    );
+    if (context && !context.silent) this.parts.publisher.display(bundle, displayId, update, context.parent);
   }
 
   // ---- the queue of shell requests
@@ -142,7 +105,7 @@ export class Kernel {
 
   private async handle({ message, aborted }: Waiting): Promise<void> {
     const { header } = message;
-    this.publishStatus("busy", header);
+    this.parts.publisher.status("busy", header);
     let reply: Reply;
     try {
       if (header.msg_type === "execute_request") {
@@ -157,9 +120,9 @@ export class Kernel {
       };
     }
     // What the request published is on its way before the reply is: who sees the reply may stop listening.
-    await this.parts.iopub.drain();
+    await this.parts.publisher.drain();
     if (reply) this.parts.shell.push(this.replyFrames(reply, message));
-    this.publishStatus("idle", header);
+    this.parts.publisher.status("idle", header);
   }
 
   private replyFrames(reply: { type: string; content: JsonObject }, request: WireMessage): Frame[] {
@@ -171,10 +134,10 @@ export class Kernel {
 
   /** Answers a request of the control socket at once; the frames are sent by the control thread. */
   control(message: WireMessage): Frame[] {
-    this.publishStatus("busy", message.header);
+    this.parts.publisher.status("busy", message.header);
     const reply = this.answer(message) ?? { type: "error", content: { status: "error" } };
     const frames = this.replyFrames(reply, message);
-    this.publishStatus("idle", message.header);
+    this.parts.publisher.status("idle", message.header);
     return frames;
   }
 
@@ -182,11 +145,11 @@ export class Kernel {
     const { content, header } = message;
     switch (header.msg_type) {
       case "kernel_info_request":
-        return { type: "kernel_info_reply", content: this.kernelInfo() };
+        return { type: "kernel_info_reply", content: kernelInfo(this.parts.version) };
       case "complete_request":
-        return { type: "complete_reply", content: this.complete(content) };
+        return { type: "complete_reply", content: completion(content, this.parts.runner) };
       case "inspect_request":
-        return { type: "inspect_reply", content: this.inspect(content) };
+        return { type: "inspect_reply", content: inspection(content, this.parts.runner) };
       case "is_complete_request":
         return { type: "is_complete_reply", content: this.parts.runner.isComplete(requiredText(content, "code")) };
       case "history_request":
@@ -195,7 +158,7 @@ export class Kernel {
         return { type: "comm_info_reply", content: { status: "ok", comms: {} } };
       case "comm_open":
         // No target is known here; the specification asks for the comm to be closed again.
-        this.publish("comm_close", { comm_id: content.comm_id ?? "", data: {} }, header);
+        this.parts.publisher.publish("comm_close", { comm_id: content.comm_id ?? "", data: {} }, header);
         return undefined;
       case "comm_msg":
       case "comm_close":
@@ -213,51 +176,6 @@ export class Kernel {
     }
   }
 
-  private kernelInfo(): JsonObject {
-    return {
-      status: "ok",
-      protocol_version: protocolVersion,
-      implementation: "cosmology-cells",
-      implementation_version: this.parts.version,
-      language_info: {
-        name: "typescript",
-        version: "5.0.4",
-        mimetype: "text/typescript",
-        file_extension: ".ts",
-        codemirror_mode: { name: "javascript", mode: "typescript", typescript: true },
-      },
-      banner: `cosmology-cells ${this.parts.version} (TypeScript through tslab ${tslabVersion}, Node ${process.versions.node})`,
-      help_links: [],
-      debugger: false,
-    };
-  }
-
-  private complete(content: JsonObject): JsonObject {
-    const code = requiredText(content, "code");
-    const at = unitsFromPoints(code, typeof content.cursor_pos === "number" ? content.cursor_pos : code.length);
-    const { start, end, candidates } = this.parts.runner.complete(code, at);
-    return {
-      status: "ok",
-      matches: candidates,
-      cursor_start: pointsFromUnits(code, start),
-      cursor_end: pointsFromUnits(code, end),
-      metadata: {},
-    };
-  }
-
-  private inspect(content: JsonObject): JsonObject {
-    const code = requiredText(content, "code");
-    const at = unitsFromPoints(code, typeof content.cursor_pos === "number" ? content.cursor_pos : code.length);
-    // At the end of a name, where a cursor usually stands, the compiler sees nothing any more.
-    const text = this.parts.runner.inspect(code, at) ?? (at > 0 ? this.parts.runner.inspect(code, at - 1) : undefined);
-    return {
-      status: "ok",
-      found: text !== undefined,
-      data: text === undefined ? {} : { "text/plain": text },
-      metadata: {},
-    };
-  }
-
   // ---- cells
 
   private async execute(message: WireMessage): Promise<JsonObject> {
@@ -267,14 +185,18 @@ export class Kernel {
     const stored = !silent && content.store_history !== false;
     if (stored) this.count++;
     const count = this.count;
-    if (!silent) this.publish("execute_input", { code, execution_count: count }, header);
+    if (!silent) this.parts.publisher.publish("execute_input", { code, execution_count: count }, header);
     const outcome = await this.runCell(code, header, silent, stored ? `cell [${count}]` : "unnumbered cell");
     if (outcome.result && !silent) {
-      this.publish("execute_result", { execution_count: count, data: outcome.result, metadata: {} }, header);
+      this.parts.publisher.publish(
+        "execute_result",
+        { execution_count: count, data: outcome.result, metadata: {} },
+        header,
+      );
     }
     if (stored) this.history.add(count, code, (outcome.result?.["text/plain"] as string | undefined) ?? null);
     if (outcome.error) {
-      if (!silent) this.publishError(outcome.error, header);
+      if (!silent) this.parts.publisher.error(outcome.error, header);
       if (content.stop_on_error !== false) await this.abortWaiting();
       const { ename, evalue, traceback } = outcome.error;
       return { status: "error", execution_count: count, ename, evalue, traceback, user_expressions: {}, payload: [] };
@@ -369,12 +291,6 @@ export class Kernel {
   /** Reports a failure of a cell's code that came after the cell's end, in that cell. */
   private late(thrown: unknown, context: CellContext): void {
     const error = describeThrown(thrown, this.parts.runner.sources, `(after ${context.name} had ended)`);
-    if (!context.silent) this.publishError(error, context.parent);
+    if (!context.silent) this.parts.publisher.error(error, context.parent);
   }
-}
-
-function requiredText(content: JsonObject, field: string): string {
-  const value = content[field];
-  if (typeof value !== "string") throw new TypeError(`the field "${field}" must be text, got ${JSON.stringify(value)}`);
-  return value;
 }

@@ -13,6 +13,7 @@ import type { ControlThreadData, FromControl, ToControl } from "./controlThread"
 import { Kernel } from "./kernel";
 import { later, nextTurn } from "./ownTimers";
 import { preludeSource } from "./prelude";
+import { Publisher } from "./publisher";
 import { Receiver } from "./receiver";
 import { SendQueue } from "./sendQueue";
 import { type ConnectionInfo, socketAddress, WireCodec, WireError, type WireMessage } from "./wire";
@@ -176,10 +177,11 @@ async function main(connectionFile: string): Promise<void> {
     leave((error as NodeJS.ErrnoException).code === "EADDRINUSE" ? portTakenExitCode : 1);
   }
 
+  const publisher = new Publisher(codec, iopub);
   const runner = new CellRunner(state);
   const started = new Kernel({
     codec,
-    iopub,
+    publisher,
     shell,
     runner,
     version,
@@ -187,7 +189,7 @@ async function main(connectionFile: string): Promise<void> {
     moreToRead: () => shellSocket.readable,
     shutdown,
   });
-  started.publishStatus("starting");
+  publisher.status("starting");
   guardTimers(() => started.lastCell());
   Error.stackTraceLimit = 50;
   redirectStreams(started);
