@@ -33,7 +33,9 @@ export function comovingDistance(
     const a = Math.exp(-s);
     return 1 / (a * expansion.rate(a));
   };
-  return backgroundIntegral(where, unitHubbleDistance, integrand, Math.log1p(from), Math.log1p(to));
+  return backgroundIntegral(where, unitHubbleDistance, integrand, Math.log1p(from), Math.log1p(to), {
+    breakpoints: expansion.kinks,
+  });
 }
 
 export const comovingDistanceQuantity: ModelQuantity = {

@@ -50,7 +50,7 @@ export const comovingVolumeQuantity: ModelQuantity = {
   description: "Comoving volume over the whole sky",
   equation: String.raw`V_C(z) = 4\pi \int_0^{D_C(z)} S_k(D)^2\,dD`,
   method: "closed form in the line-of-sight comoving distance; a shell by quadrature over its depth",
-  accuracy: 1.5e-13,
+  accuracy: 1e-13,
   sources: ["hogg1999"],
   compute: (evaluation, values) => comovingVolume(evaluation, ...redshiftPair(values)),
 };

@@ -39,6 +39,26 @@ export class CumulativeIntegral {
     return this.ends[this.ends.length - 1]!;
   }
 
+  /**
+   * Where the integrand was found to be rough, a kink or a jump: the middle of the smallest piece in each group of neighboring
+   * pieces below 1e-4 of the range.
+   */
+  roughPlaces(): number[] {
+    const places: number[] = [];
+    let smallest = Number.POSITIVE_INFINITY;
+    for (let i = 1; i < this.ends.length; i++) {
+      const width = this.ends[i]! - this.ends[i - 1]!;
+      if (width > 1e-4 * (this.upper - this.lower)) {
+        smallest = Number.POSITIVE_INFINITY;
+      } else if (width < smallest) {
+        if (smallest < Number.POSITIVE_INFINITY) places.pop();
+        smallest = width;
+        places.push((this.ends[i]! + this.ends[i - 1]!) / 2);
+      }
+    }
+    return places;
+  }
+
   /** int_lower^x f; x outside the range throws DomainError. */
   evaluate(x: number): number {
     if (!(x >= this.lower && x <= this.upper)) {

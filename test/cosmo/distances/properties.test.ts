@@ -173,7 +173,8 @@ describe("a closed model", () => {
     expect(noted.value).toBeGreaterThan(0);
     expect(noted.notes[0]!.level).toBe("warning");
     expect(noted.notes[0]!.text).toContain("passed the antipode");
-    expect(numbers.quantity("luminosityDistance", 0.2).notes).toEqual([]);
+    const near = numbers.quantity("luminosityDistance", 0.2).notes;
+    expect(near.filter((note) => note.level === "warning")).toEqual([]);
     expect(() => numbers.value("comovingVolume", z)).toThrow(
       "comovingVolume: redshift 3 lies beyond the antipode of this closed model: all of space is nearer",
     );
