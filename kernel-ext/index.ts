@@ -1,7 +1,7 @@
 /** What the package offers; a cell of the kernel knows all of it without an import. */
 export type { ModelGivens } from "../cosmo/model";
 export type { QuantityValue } from "../cosmo/quantity";
-export { evaluateModel, type ModelNumbers } from "../cosmo/solve";
+export type { ModelNumbers } from "../cosmo/solve";
 export {
   type AcousticScaleValues,
   acousticScaleCell,
@@ -32,6 +32,7 @@ export {
   type TimelineValues,
   timelineCell,
 } from "./cells";
+export { evaluateModel } from "./cells/evaluateModel";
 export {
   barChart,
   type CellOutputOptions,
