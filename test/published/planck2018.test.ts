@@ -80,6 +80,19 @@ describe("the columns of Planck 2018 VI table 2", () => {
   }
 });
 
+describe("z_re from tau in the columns of Planck 2018 VI table 2", () => {
+  for (const column of planck2018Table2) {
+    it(`${column.name}: within an eighth of the printed error, above it by the curvature of z_re over a posterior`, () => {
+      const printed = column.numbers["reionizationRedshift"]!;
+      const depth = Number(column.numbers["reionizationDepth"]!.digits);
+      const z = evaluateModel({ ...givensOf(column), reionizationDepth: depth }).value("reionizationRedshift");
+      // Measured: 0.020 to 0.037 of the error, all above the printed mean.
+      expect(Math.abs(z - Number(printed.digits))).toBeLessThan(Math.min(printed.upper!, printed.lower!) / 8);
+      expect(z).toBeGreaterThan(Number(printed.digits));
+    });
+  }
+});
+
 describe("the best fit of Planck 2018 VI table 1", () => {
   // One parameter point with givens of 4 to 5 digits.
   const numbers = evaluateModel({ ...givensOf(planck2018BestFit), reionizationDepth: 0.0543 });
