@@ -5,13 +5,24 @@
 import { writeFileSync } from "node:fs";
 import { built } from "../suite.mjs";
 
-/** Gauss-Legendre nodes in sqrt(a + offset), as horizons.ts has them. */
-function rootNodes({ nodes, weights }, from, to, offset) {
-  const low = Math.sqrt(from + offset);
-  const half = (Math.sqrt(to + offset) - low) / 2;
-  const roots = [...nodes].map((x) => low + half * (1 + x));
-  const places = roots.map((root) => root * root - offset);
-  return { nodes: places, logs: places.map(Math.log), weights: roots.map((root, i) => 2 * root * half * weights[i]) };
+/** The fixed nodes of horizons.ts, read from where an instance keeps them, and Gauss-Legendre rules for the short stretches between. */
+function horizonNodes({ Horizons }, { gaussLegendre }) {
+  const fresh = new Horizons();
+  const lateBegin = fresh.weights.findIndex((weight) => weight !== 0);
+  const slice = (instance, from, to) => ({
+    nodes: instance.nodes.slice(from, to),
+    logs: instance.logs.slice(from, to),
+    weights: instance.weights.slice(from, to),
+  });
+  const late = slice(fresh, lateBegin);
+  fresh.setEarly(1, 0);
+  const early = slice(fresh, 0, fresh.weights.indexOf(0));
+  const toDrag = gaussLegendre(2);
+  const toFixed = gaussLegendre(4);
+  if (early.nodes.length + toDrag.nodes.length + toFixed.nodes.length !== lateBegin) {
+    throw new Error("c/tables.mjs no longer knows the nodes of cosmo/batch/horizons.ts");
+  }
+  return { early, late, toDrag, toFixed };
 }
 
 /** Writes the header; `photonTemperature` is that of every model. */
@@ -27,7 +38,6 @@ export function writeTables(path, photonTemperature = 2.7255) {
   const { constantsSets, lightSpeed, atoms } = built("cosmo/constants/index.js");
   const expansion = built("cosmo/expansion/index.js");
   const { hundredKmPerSecondPerMpc, photonDensity } = built("cosmo/model/index.js");
-  const { gaussLegendre } = built("cosmo/numerics/index.js");
 
   const constants = constantsSets.codata2022;
   const atom = atomTables("calibrated", constants);
@@ -62,10 +72,10 @@ export function writeTables(path, photonTemperature = 2.7255) {
     (atoms.heliumTripletRate * atoms.hydrogenCrossSectionAtSinglet * atoms.heliumSinglet2p ** 3) /
     (atoms.heliumSingletRate * atoms.hydrogenCrossSectionAtTriplet * atoms.heliumTriplet2p ** 3);
   const fixedStart = 1 / 850;
-  const early = rootNodes(gaussLegendre(9), 0, 1, 0.25);
-  const late = rootNodes(gaussLegendre(20), fixedStart, 1, 0);
-  const toDrag = gaussLegendre(2);
-  const toFixed = gaussLegendre(4);
+  const { early, late, toDrag, toFixed } = horizonNodes(
+    built("cosmo/batch/horizons.js"),
+    built("cosmo/numerics/index.js"),
+  );
 
   whole({
     gridSize: grid.gridSize,
