@@ -34,7 +34,9 @@ export function soundHorizon(evaluation: ModelEvaluation, z: number): NumericalR
     const a = root * root;
     return (2 * root) / Math.sqrt(3 * (1 + loading * a) * expansion.squaredTerm(a));
   };
-  return backgroundIntegral("soundHorizon", unitHubbleDistance, integrand, 0, 1 / Math.sqrt(1 + z));
+  return backgroundIntegral("soundHorizon", unitHubbleDistance, integrand, 0, 1 / Math.sqrt(1 + z), {
+    breakpoints: expansion.kinkRoots,
+  });
 }
 
 /** The closed form divides by z: it has no value today. */

@@ -29,6 +29,10 @@ export class Expansion {
   private readonly w0: number;
   private readonly wa: number;
   private readonly speciesDensity: number;
+  /** ln(1+z) where w has a kink or a jump: no panel of a quadrature should straddle one. */
+  readonly kinks: readonly number[];
+  /** The same places as sqrt(a). */
+  readonly kinkRoots: readonly number[];
   /** y = m c^2/(k T_nu) today, one a massive species. */
   private readonly massRatios: readonly number[];
 
@@ -43,6 +47,8 @@ export class Expansion {
     this.darkEnergy = model.darkEnergyDensity;
     this.w0 = model.darkEnergy.w0;
     this.wa = model.darkEnergy.wa;
+    this.kinks = stateHistory?.kinks ?? [];
+    this.kinkRoots = this.kinks.map((t) => Math.exp(-t / 2));
     this.speciesDensity = model.neutrinos.masslessSpeciesDensity;
     const temperature = model.neutrinos.temperature;
     this.massRatios =
@@ -122,7 +128,7 @@ export const stateHistoryPart: ModelPart<StateHistory | undefined> = {
     return [
       {
         level: "note",
-        text: `w by cubic pieces in a through a table of ${redshifts.length} redshifts from ${redshifts[0]} to ${redshifts[redshifts.length - 1]}, held at its ends; the numerical error includes what straight pieces would change`,
+        text: `w by cubic pieces in a through a table of ${redshifts.length} redshifts from ${redshifts[0]} to ${redshifts[redshifts.length - 1]}, held at its ends; the numerical error includes what half of the points would change`,
       },
     ];
   },

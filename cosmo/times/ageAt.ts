@@ -28,7 +28,9 @@ export function ageAt(evaluation: ModelEvaluation, z: number, where = "ageAt"): 
     const a = root * root;
     return (2 * a * root) / Math.sqrt(expansion.squaredTerm(a));
   };
-  return backgroundIntegral(where, unitHubbleTime, integrand, 0, 1 / Math.sqrt(1 + z));
+  return backgroundIntegral(where, unitHubbleTime, integrand, 0, 1 / Math.sqrt(1 + z), {
+    breakpoints: expansion.kinkRoots,
+  });
 }
 
 export const ageAtQuantity: ModelQuantity = {

@@ -25,7 +25,9 @@ export function conformalTime(evaluation: ModelEvaluation, z: number, where = "c
   requireFiniteStart(evaluation, where, 2);
   const expansion = evaluation.once(expansionPart);
   const integrand = (root: number) => (2 * root) / Math.sqrt(expansion.squaredTerm(root * root));
-  return backgroundIntegral(where, unitHubbleDistance, integrand, 0, 1 / Math.sqrt(1 + z));
+  return backgroundIntegral(where, unitHubbleDistance, integrand, 0, 1 / Math.sqrt(1 + z), {
+    breakpoints: expansion.kinkRoots,
+  });
 }
 
 export const conformalTimeQuantity: ModelQuantity = {

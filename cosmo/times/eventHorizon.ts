@@ -42,7 +42,9 @@ export function eventHorizon(evaluation: ModelEvaluation, z: number): NumericalR
       ? backgroundIntegral(where, unitHubbleDistance, perFold, Math.max(0, start), endOfFuture(perFold, start))
       : futureAtConstantState(expansion, -(1 + 3 * w0) / 2, Math.max(0, start));
   if (start >= 0) return future;
-  const past = backgroundIntegral(where, unitHubbleDistance, perFold, start, 0);
+  const past = backgroundIntegral(where, unitHubbleDistance, perFold, start, 0, {
+    breakpoints: expansion.kinks.map((t) => -t),
+  });
   return {
     value: past.value + future.value,
     error: past.error + future.error,

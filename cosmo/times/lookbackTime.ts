@@ -38,7 +38,9 @@ export function timeIntegral(
   requireRedshift(evaluation, from, where);
   requireRedshift(evaluation, to, where);
   const expansion = evaluation.once(expansionPart);
-  return backgroundIntegral(where, unit, (s) => 1 / expansion.rate(Math.exp(-s)), Math.log1p(from), Math.log1p(to));
+  return backgroundIntegral(where, unit, (s) => 1 / expansion.rate(Math.exp(-s)), Math.log1p(from), Math.log1p(to), {
+    breakpoints: expansion.kinks,
+  });
 }
 
 export const lookbackTimeQuantity: ModelQuantity = {
