@@ -344,7 +344,6 @@ const bibliography = {
     year: 2004,
     title: "Colorimetry, 3rd edition",
     reference: "CIE 15:2004, table T.4 and illuminant A",
-    memory: true,
   },
   hairerWanner1999: {
     authors: "Hairer & Wanner",

