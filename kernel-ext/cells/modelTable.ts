@@ -30,11 +30,17 @@ export function modelTable(model: ClosedModel, tiers: readonly string[] = [model
       { key: "unit", label: "unit", symbols: true },
     ],
     rows,
-    notes: [
-      ...solutionNotes(model),
-      `conventions: constants ${model.conventions.constants}, closure ${model.conventions.closure}, equalityMatter ${model.conventions.equalityMatter}, recombination ${tiers.join(", ")}`,
-    ],
+    notes: [...solutionNotes(model), `conventions: ${conventionList(model)}, recombination ${tiers.join(", ")}`],
   });
+}
+
+/** Every convention with its choice, in the order in which fields are listed. */
+function conventionList({ conventions }: ClosedModel): string {
+  const { constants, closure, equalityMatter, lastScattering, drag, soundHorizon } = conventions;
+  const choices = { constants, closure, equalityMatter, lastScattering, drag, soundHorizon };
+  return Object.entries(choices)
+    .map(([name, choice]) => `${name} ${choice}`)
+    .join(", ");
 }
 
 /** w0 and wa, or the formula or table that stands in their place. */
