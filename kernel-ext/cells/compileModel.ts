@@ -8,7 +8,8 @@ const field = "darkEnergy.equation";
 /**
  * A model whose `darkEnergy.equation` may be text, with the text compiled; any other model as it is.
  *
- * The formula is in z or in a, not in both; one without either is a constant. Workers and replays get the text and compile it again.
+ * The formula is in z or in a, not in both; one without either is a constant. Workers and replays get the text
+ * ({@link portableModel}) and compile it again; what lost its function on the way, as in JSON, is compiled from its text too.
  *
  * @param where who asked, for the texts of errors; @param place where the model stood.
  * A formula that cannot be taken: DomainError that names the place in it and the reason.
@@ -17,8 +18,26 @@ const field = "darkEnergy.equation";
 export function compileModel(model: ModelGivens, where: string, place?: string): ModelGivens {
   // Whatever is no model is refused when it is closed.
   const equation = (model as ModelGivens | null | undefined)?.darkEnergy?.equation;
-  if (typeof equation !== "string") return model;
-  return { ...model, darkEnergy: { ...model.darkEnergy, equation: compileEquation(equation, where, place) } };
+  const text = typeof equation === "string" ? equation : textWithoutFunction(equation);
+  if (text === undefined) return model;
+  return { ...model, darkEnergy: { ...model.darkEnergy, equation: compileEquation(text, where, place) } };
+}
+
+function textWithoutFunction(equation: unknown): string | undefined {
+  if (typeof equation !== "object" || equation === null) return undefined;
+  const { text, evaluate } = equation as Partial<DarkEnergyEquation>;
+  return typeof text === "string" && evaluate === undefined ? text : undefined;
+}
+
+/**
+ * A model as it can be written down or sent to a worker: a compiled equation of state as its text again; any other model as it is.
+ *
+ * @example portableModel(compileModel(model, "record")) // what compileModel took
+ */
+export function portableModel(model: ModelGivens): ModelGivens {
+  const equation = model.darkEnergy?.equation;
+  if (typeof equation !== "object") return model;
+  return { ...model, darkEnergy: { ...model.darkEnergy, equation: equation.text } };
 }
 
 /**

@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { evaluateModel } from "../../../cosmo/solve";
-import { compileEquation, compileModel } from "../../../kernel-ext/cells/compileModel";
+import { compileEquation, compileModel, portableModel } from "../../../kernel-ext/cells/compileModel";
 
 const base = { hubble: 67.4, baryonDensity: 0.0224, coldMatterDensity: 0.12 };
 
@@ -22,6 +22,17 @@ describe("compileModel(model, where)", () => {
     const compiled = compileModel({ ...base, darkEnergy: { equation: "-1" } }, "test");
     expect(compileModel(compiled, "test")).toBe(compiled);
     expect(compileModel(undefined as never, "test")).toBe(undefined);
+  });
+
+  it("comes back as text from portableModel, survives structured cloning and JSON, and compiles again", () => {
+    const model = { ...base, darkEnergy: { equation: "-1 + 0.1 z/(1 + z)" } };
+    const compiled = compileModel(model, "test");
+    expect(portableModel(compiled)).toEqual(model);
+    expect(portableModel(base)).toBe(base);
+    const age = evaluateModel(compiled).value("age");
+    expect(evaluateModel(compileModel(structuredClone(portableModel(compiled)), "test")).value("age")).toBe(age);
+    const written = JSON.parse(JSON.stringify(compiled)) as typeof compiled;
+    expect(evaluateModel(compileModel(written, "test")).value("age")).toBe(age);
   });
 
   it("takes a constant, and refuses both letters and bad formulas by place", () => {
