@@ -14,14 +14,17 @@ import type { NeutrinoOrdering } from "../../cosmo/model";
 import type * as neutrinoMasses from "../../cosmo/model/neutrinoMasses";
 import type * as photonDensity from "../../cosmo/model/photonDensity";
 import type * as gas from "../../cosmo/recombination/gas";
+import type { Gas } from "../../cosmo/recombination/gas";
 import type * as heliumRates from "../../cosmo/recombination/heliumRates";
 import type * as hydrogenRates from "../../cosmo/recombination/hydrogenRates";
 import type * as lymanAlphaCorrection from "../../cosmo/recombination/lymanAlphaCorrection";
 import type * as nucleosynthesisHelium from "../../cosmo/recombination/nucleosynthesisHelium";
 import type * as reionizationProfile from "../../cosmo/recombination/reionizationProfile";
 import type * as sahaFactors from "../../cosmo/recombination/sahaFactors";
+import type * as threeLevelAtom from "../../cosmo/recombination/threeLevelAtom";
 import type * as evaluateModel from "../../cosmo/solve/evaluateModel";
 import type { FormulaArgument } from "./readFormulas";
+import { referenceModels } from "./readReferences";
 
 /** The modules of cosmo/ whose formulas have references, by their place below cosmo/. */
 export interface FormulaModules {
@@ -46,6 +49,7 @@ export interface FormulaModules {
   readonly "recombination/nucleosynthesisHelium": typeof nucleosynthesisHelium;
   readonly "recombination/reionizationProfile": typeof reionizationProfile;
   readonly "recombination/sahaFactors": typeof sahaFactors;
+  readonly "recombination/threeLevelAtom": typeof threeLevelAtom;
   readonly "solve/evaluateModel": typeof evaluateModel;
 }
 
@@ -108,6 +112,13 @@ function ofModel(quantity: string): FormulaFunction {
         ? module.evaluateModel({ ...givens, reionizationRedshift: z! }).value(quantity)
         : module.evaluateModel(givens).value(quantity, ...(own as Numbers));
     },
+  );
+}
+
+/** A quantity of the register, for one of the reference models in the calibrated tier. */
+function ofReferenceModel(quantity: string): FormulaFunction {
+  return entry("solve/evaluateModel", (module, [name, ...own]) =>
+    module.evaluateModel(referenceModels().get(name as string)!).value(quantity, ...(own as Numbers)),
   );
 }
 
@@ -188,6 +199,12 @@ export const formulaFunctions: Readonly<Record<string, FormulaFunction>> = {
       (...values: Parameters<typeof module.sahaLogarithms>) =>
         module.sahaLogarithms(...values).heliumIon,
   ),
+  heliumWithHydrogen: entry("recombination/threeLevelAtom", (module, values, load) => {
+    const [hydrogen, temperature, hydrogenDensity, heliumRatio] = values as Numbers;
+    // Of the gas it reads these two alone.
+    const part = { heliumRatio: heliumRatio!, constants: setOf(load, values[4]!) } as Gas;
+    return module.heliumWithHydrogen(hydrogen!, temperature!, hydrogenDensity!, part);
+  }),
   heliumSingletRecombination: plain("recombination/heliumRates", (module) => module.heliumSingletRecombination),
   heliumTripletRecombination: plain("recombination/heliumRates", (module) => module.heliumTripletRecombination),
   heliumLogitRate: entry("recombination/heliumRates", (module, values, load) => {
@@ -253,6 +270,9 @@ export const formulaFunctions: Readonly<Record<string, FormulaFunction>> = {
 
   "ofModel.baryonToPhotonRatio": ofModel("baryonToPhotonRatio"),
   "ofModel.reionizationDepth": ofModel("reionizationDepth"),
+  "ofReferenceModel.peakMultipole": ofReferenceModel("peakMultipole"),
+  "ofReferenceModel.peakSpacing": ofReferenceModel("peakSpacing"),
+  "ofModel.decelerationAt": ofModel("decelerationAt"),
   "ofModel.backgroundBrightness": ofModel("backgroundBrightness"),
   "ofModel.wienFrequency": ofModel("wienFrequency"),
   "ofModel.wienWavelength": ofModel("wienWavelength"),

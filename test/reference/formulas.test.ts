@@ -20,6 +20,7 @@ import * as lymanAlphaCorrection from "../../cosmo/recombination/lymanAlphaCorre
 import * as nucleosynthesisHelium from "../../cosmo/recombination/nucleosynthesisHelium";
 import * as reionizationProfile from "../../cosmo/recombination/reionizationProfile";
 import * as sahaFactors from "../../cosmo/recombination/sahaFactors";
+import * as threeLevelAtom from "../../cosmo/recombination/threeLevelAtom";
 import * as evaluateModel from "../../cosmo/solve/evaluateModel";
 import { formulaBound } from "./formulaBounds";
 import { type FormulaModules, formulaFunctions, type LoadModule } from "./formulaFunctions";
@@ -48,6 +49,7 @@ const modules: FormulaModules = {
   "recombination/nucleosynthesisHelium": nucleosynthesisHelium,
   "recombination/reionizationProfile": reionizationProfile,
   "recombination/sahaFactors": sahaFactors,
+  "recombination/threeLevelAtom": threeLevelAtom,
   "solve/evaluateModel": evaluateModel,
 };
 const load: LoadModule = (place) => modules[place];

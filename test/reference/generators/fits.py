@@ -134,7 +134,7 @@ def main():
         tabulate(name, source, "fits.py", arguments, function, points)
 
     put("carrollAge", "Carroll, Press & Turner 1992 (memory)", ["matter", "lambda"], carroll,
-        [(0.3, 0.7), (0.25, 0.6), (0.31, 0.0), (1.6, 0.2), (1.4, 0.9), (0.2, 0.95)])
+        [(0.3, 0.7), (0.25, 0.6), (0.31, 0.0), (1.6, 0.2), (1.4, 0.9), (0.2, 0.95), (1.0, 0.0)])
     w_nu = [0.0, 6.451e-4, 0.0064]
     eq16 = "Aubourg et al. 2015 (1411.1074), eq. 16"
     put("aubourgDragSoundHorizon", eq16, ["baryonDensity", "baryonsAndCold", "neutrinoDensity"], aubourg16,

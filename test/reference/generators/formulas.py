@@ -4,6 +4,8 @@ Nothing of the program was read for this file but the names of its functions and
 also runs fits.py and blackbody.py; the argument, if any, is blackbody.py's.
 """
 
+import json
+import os
 from itertools import product
 
 from mpmath import exp, findroot, log, mpf, pi, quad, sqrt, tanh
@@ -11,7 +13,7 @@ from mpmath import exp, findroot, log, mpf, pi, quad, sqrt, tanh
 import blackbody
 import constants as K
 import fits
-from formulas_output import tabulate, write
+from formulas_output import HERE, tabulate, write
 
 m = mpf
 C = m(K.C)
@@ -52,6 +54,12 @@ def ground(T, name):
 def peebles(K_, beta, n):
     two = RATE["H_two_photon"]
     return (1 + K_ * two * n) / (1 + K_ * (two + beta) * n)
+
+
+def helium_beside(x_p, T, n_H, f, name):
+    """y > 0 of f y^2 + (x_p + s) y - s = 0, s = 4 G e^(-L_He/kT)/n_H."""
+    s = 4 * states(T, name) * exp(-kelvin(LEVEL["He_limit"], name) / T) / n_H
+    return (sqrt((x_p + s) ** 2 + 4 * f * s) - x_p - s) / (2 * f)
 
 
 def helium_recombination(T, q, p):
@@ -175,10 +183,38 @@ def reionization_depth(hubble, wb, wc, Y, T, name, z_re):
     return quad(slope, [0, 2, 3, m("3.5"), 4, 5, z_re - 1, z_re, z_re + 1, z_re + 3, 20, 50])
 
 
+def deceleration(hubble, wb, wc, Y, T, name, z):
+    _, matter, radiation, rest = model(hubble, wb, wc, T, name)
+    u = 1 + z
+    return (matter * u ** 3 + 2 * radiation * u ** 4 - 2 * rest) / (matter * u ** 3 + radiation * u ** 4 + rest) / 2
+
+
+def reference_value(file, name):
+    """A value of values/ without arguments, of a reference model."""
+    with open(os.path.join(HERE, "..", "values", file + ".json")) as f:
+        return [m(repr(row[1])) for row in json.load(f)["rows"] if row[0] == name][0]
+
+
+def peak_rows():
+    """l_m = l_A (m - phi - d_m) with l_A, z_* and omega_nu of the reference; models with a constant, whose early share is nothing."""
+    peaks, spacings = [], []
+    for name, givens in [(each["name"], each["givens"]) for each in json.load(open(os.path.join(HERE, "..", "models.json")))]:
+        if "darkEnergy" in givens or len(spacings) == 3:
+            continue
+        scale, star = reference_value("acousticMultipole.calibrated", name), reference_value("lastScatteringRedshift.calibrated", name)
+        wb = m(repr(givens["baryonDensity"]))
+        wm = wb + m(repr(givens["coldMatterDensity"])) + reference_value("neutrinoDensity", name)
+        at = [scale * (peak - fits.phase(peak, wb, fits.ratio_at(wm, star), m("0.965"), m(0))) for peak in (1, 2, 3)]
+        peaks += [([name, peak], at[peak - 1]) for peak in (1, 2, 3)]
+        spacings.append(([name], (at[2] - at[0]) / 2))
+    return peaks, spacings
+
+
 # givens: hubble, omega_b, omega_c, Y_p, T_cmb, set; then the quantity's own arguments
 OF_MODEL = {
     "baryonToPhotonRatio": ("n_H + 4 n_He over Planck's photons", baryons_per_photon, [()]),
     "reionizationDepth": ("Lewis 2008; int c sigma_T n_H x_re dz/[H (1+z)] from 0 to 50 by mpmath", reionization_depth, [(6.3,), (7.68,), (9.4,)]),
+    "decelerationAt": ("(1/2) sum (rho + 3 P)/rho_c", deceleration, [(0.0,), (1.0,), (3400.0,)]),
     "backgroundBrightness": ("Planck 1901, MJy/sr at GHz",
                              lambda h, wb, wc, Y, T, name, ghz: blackbody.planck(ghz * 10 ** 9, T, name) * m(10) ** 20, [(30.0,), (160.23,), (857.0,)]),
     "wienFrequency": ("Wien 1893, GHz", lambda h, wb, wc, Y, T, name: blackbody.wien_frequency(T, name) / 10 ** 9, [()]),
@@ -263,6 +299,8 @@ def main():
         put("sahaLogarithms." + which, "Saha's equation", ["temperature", "constants"],
             lambda T, name, weight=weight, level=level: log(weight) + log(states(T, name)) - kelvin(LEVEL[level], name) / T,
             list(product([3000.0, 4500.0, 7000.0, 16000.0], SETS)))
+    put("heliumWithHydrogen", "Saha's equation with x_e = x_p + f y", ["hydrogen", "temperature", "hydrogenDensity", "heliumRatio", "constants"],
+        helium_beside, [(x_p, T, n_H, 0.081, name) for x_p, T, n_H in ((1.0, 7600.0, 4e9), (1.0, 7000.0, 3.1e9), (0.97, 5000.0, 1.2e9), (0.4, 3700.0, 5e8)) for name in SETS])
     wms = "Switzer & Hirata 2008; Kholupenko et al. 2007; Wong, Moss & Scott 2008 (coefficients memory)"
     put("heliumSingletRecombination", wms, ["temperature"], singlet, [(T,) for T in TEMPERATURES])
     put("heliumTripletRecombination", wms, ["temperature"], triplet, [(T,) for T in TEMPERATURES])
@@ -302,6 +340,10 @@ def main():
     for quantity, (source, function, own) in OF_MODEL.items():
         put("ofModel." + quantity, source, names + ["argument"] * len(own[0]), function,
             [given + (name,) + argument for given in GIVENS for name in SETS for argument in own])
+    peaks, spacings = peak_rows()
+    doran = "Doran & Lilley 2002 (memory) with l_A, z_* and omega_nu of values/; dark energy before last scattering left out (3e-10)"
+    write("ofReferenceModel.peakMultipole", doran, "formulas.py", ["model", "peak"], peaks)
+    write("ofReferenceModel.peakSpacing", doran, "formulas.py", ["model"], spacings)
     for line, A, level, sigma, a, b in (("singlet", "He_singlet", "He_2p", "singlet", "0.36", "0.86"), ("triplet", "He_triplet", "He_3P", "triplet", "0.66", "0.9")):
         strength = lambda A, level, sigma: RATE[A] / (m(K.SIGMA_1S[sigma]) * LEVEL[level] ** 3)
         ratio = strength(A, level, sigma) / strength("He_singlet", "He_2p", "singlet")
