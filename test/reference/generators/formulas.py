@@ -1,7 +1,8 @@
 """Closed formulas of recombination, reionization, helium, neutrinos and densities, transcribed from the physics contract.
 
-Nothing of the program was read for this file but the names of its functions and the order of their arguments. `formulas.py`
-also runs fits.py and blackbody.py; the argument, if any, is blackbody.py's.
+Written from the contract and the functions' names and argument order, before the program's text was read; OF_MODEL, peak_rows,
+helium_beside and the continuum escape came after that, from the contract too. `formulas.py` also runs fits.py and blackbody.py; the
+argument, if any, is blackbody.py's. The peaks need values/ as they are now.
 """
 
 import json
