@@ -1,31 +1,18 @@
 import { CosmologyError, DomainError, UnknownNameError } from "../../cosmo/errors";
 import type { ModelGivens } from "../../cosmo/model";
 import { parseRequests, type QuantityRequest } from "../../cosmo/quantities";
-import type { QuantityValue } from "../../cosmo/quantity";
-import { type Derivative, evaluateModel, type ModelNumbers } from "../../cosmo/solve";
-import {
-  barChart,
-  type CellResult,
-  type Chart,
-  cellOutput,
-  formatNumber,
-  symbolText,
-  type Table,
-  table,
-} from "../display";
+import { evaluateModel, type ModelNumbers } from "../../cosmo/solve";
+import { type CellResult, cellOutput } from "../display";
 import { checkOptions } from "./checkOptions";
 import { compileModel } from "./compileModel";
-import { explainShift, type ShiftExplanation } from "./explainShift";
+import { explainShift } from "./explainShift";
 import { type HeldCombination, heldCombination } from "./heldCombination";
 import { modelTable } from "./modelTable";
 import { notesOf, quantityTable, sourcesOf } from "./quantityTable";
-import {
-  checkedNames,
-  defaultParameters,
-  describeParameter,
-  type SensitivityParameter,
-  withMassSum,
-} from "./sensitivityParameters";
+import { sensitivityChart } from "./sensitivityChart";
+import type { SensitivityColumn, SensitivityEntry } from "./sensitivityMatrix";
+import { checkedNames, defaultParameters, describeParameter, withMassSum } from "./sensitivityParameters";
+import { combinationTable, sensitivityTable, shiftTable, slopeSentence } from "./sensitivityTables";
 
 /** Options of {@link sensitivityCell}. */
 export interface SensitivityCellOptions {
@@ -63,21 +50,6 @@ export interface SensitivityValues {
   };
 }
 
-interface Column {
-  readonly request: QuantityRequest;
-  readonly value: QuantityValue;
-  /** Whether its logarithm is differentiated: where it is positive and no magnitude. */
-  readonly logarithmic: boolean;
-}
-
-interface Entry {
-  readonly column: Column;
-  readonly parameter: SensitivityParameter;
-  readonly slope: Derivative;
-  /** The slope as the matrix has it. */
-  readonly shown: number;
-}
-
 /**
  * What moves a number, and how strongly: logarithmic derivatives by the parameters of the model, as a matrix and as bars; which
  * combination of omega_m, h and omega_b the first quantity fixes; and, for a shift, which parameter would have to move.
@@ -100,13 +72,13 @@ export function sensitivityCell(model: ModelGivens, options: SensitivityCellOpti
   // Closed as stated first, so that errors speak of the model as it came.
   const stated = evaluateModel(compileModel(model, where), { where });
   const numbers = evaluateModel(withMassSum(stated.model), { where });
-  const columns = requests.map((request): Column => {
+  const columns = requests.map((request): SensitivityColumn => {
     const value = numbers.quantity(request.name, ...request.arguments);
     // Magnitudes are logarithms already.
     return { request, value, logarithmic: value.value > 0 && value.unit !== "mag" };
   });
   const { names, notes } = asked === undefined ? defaultParameters(numbers) : { names: asked, notes: [] };
-  const entries: Entry[][] = [];
+  const entries: SensitivityEntry[][] = [];
   for (const name of names) {
     try {
       entries.push(rowOf(numbers, name, columns, where));
@@ -232,7 +204,12 @@ function shiftedRequest(requests: readonly QuantityRequest[], options: Sensitivi
 }
 
 /** The derivatives of every quantity by one parameter. */
-function rowOf(numbers: ModelNumbers, name: string, columns: readonly Column[], where: string): Entry[] {
+function rowOf(
+  numbers: ModelNumbers,
+  name: string,
+  columns: readonly SensitivityColumn[],
+  where: string,
+): SensitivityEntry[] {
   if (name === "neutrinos.massSum" && numbers.model.givens.neutrinos?.masses !== undefined) {
     throw new DomainError({
       where,
@@ -251,154 +228,15 @@ function rowOf(numbers: ModelNumbers, name: string, columns: readonly Column[], 
   });
 }
 
-function matrixOf(columns: readonly Column[], rows: readonly Entry[][], read: (entry: Entry) => number) {
+function matrixOf(
+  columns: readonly SensitivityColumn[],
+  rows: readonly SensitivityEntry[][],
+  read: (entry: SensitivityEntry) => number,
+) {
   return Object.fromEntries(
     columns.map(({ request }, i) => [
       request.text,
       Object.fromEntries(rows.map((row) => [row[i]!.parameter.name, read(row[i]!)])),
     ]),
   );
-}
-
-const above = ({ request, logarithmic }: Column) => (logarithmic ? `d ln ${request.text}` : `d ${request.text}`);
-
-function sensitivityTable(
-  columns: readonly Column[],
-  rows: readonly Entry[][],
-  followsNucleosynthesis: boolean,
-): Table {
-  const largest = Math.max(
-    ...rows.flat().map(({ slope }) => (slope.value === 0 ? 0 : slope.error / Math.abs(slope.value))),
-  );
-  return table({
-    title: "Sensitivity: what stands above each column, by what begins each row",
-    columns: [
-      { key: "by", label: "by" },
-      { key: "symbol", label: "symbol", symbols: true },
-      { key: "value", label: "value here", digits: 6 },
-      { key: "unit", label: "unit", symbols: true },
-      ...columns.map((column, i) => ({
-        key: `q${i}`,
-        label: above(column),
-        ...(column.logarithmic ? {} : { unit: column.value.unit }),
-        digits: 5,
-      })),
-    ],
-    rows: rows.map((row) => {
-      const { name, symbol, unit, value, perUnit } = row[0]!.parameter;
-      return {
-        by: perUnit ? `d ${name} (by the parameter itself)` : `d ln ${name}`,
-        symbol,
-        value,
-        unit,
-        ...Object.fromEntries(row.map(({ shown }, i) => [`q${i}`, shown])),
-      };
-    }),
-    notes: [
-      "by the parameter itself where it may be zero or negative, by its logarithm elsewhere; the other givens held",
-      ...(followsNucleosynthesis ? ["helium follows nucleosynthesis, so it moves with ω_b and N_eff"] : []),
-      `numerical error at most ${formatNumber(largest, { digits: 1 })} of each derivative`,
-    ],
-  });
-}
-
-function slopeSentence({ text }: QuantityRequest, slope: number): string {
-  const power = -slope;
-  return `At fixed ω_b, constant ${text} means d ln Ω_m/d ln h = ${formatNumber(slope, { digits: 4 })}: it fixes Ω_m h^${power.toFixed(2)}.`;
-}
-
-const printedPowers =
-  "printed for flat models: Ω_m h³ for θ_* (Planck 2018 VI, section 3), Ω_m h^3.4 for the horizon angle (Percival et al. 2002), both from memory";
-
-function combinationTable(request: QuantityRequest, { exponents, unitVector, matterFractionSlope }: HeldCombination) {
-  const names = [
-    ["matterDensity", "ω_m"],
-    ["reducedHubble", "h"],
-    ["baryonDensity", "ω_b"],
-  ] as const;
-  const law = names.map(([name, symbol]) => `${symbol}^${exponents[name].toFixed(3)}`).join(" ");
-  return table({
-    title: `The combination that ${request.text} fixes`,
-    columns: [
-      { key: "name", label: "of" },
-      { key: "symbol", label: "symbol", symbols: true },
-      { key: "exponent", label: "exponent", digits: 5 },
-      { key: "unit", label: "unit vector", digits: 5 },
-    ],
-    rows: names.map(([name, symbol]) => ({ name, symbol, exponent: exponents[name], unit: unitVector[name] })),
-    notes: [
-      `near this model ${request.text} goes as ${law}, everything else held`,
-      ...(matterFractionSlope === undefined ? [] : [slopeSentence(request, matterFractionSlope)]),
-      ...(request.name === "acousticAngle" ? [printedPowers] : []),
-    ],
-  });
-}
-
-function shiftTable({ request, value }: Column, amount: number, explained: readonly ShiftExplanation[]): Table {
-  const unit = value.unit === "" ? "" : ` ${value.unit}`;
-  const errors = explained.some(({ inErrors }) => inErrors !== undefined);
-  const idle = explained.filter(({ change }) => change === undefined).map(({ parameter }) => parameter.name);
-  const impossible = explained.filter(({ change, reached }) => change !== undefined && reached === undefined);
-  return table({
-    title: `What would shift ${request.text} (${symbolText(value.symbol)}) by ${formatNumber(amount, { digits: "all" })}${unit}, each parameter alone`,
-    columns: [
-      { key: "parameter", label: "parameter" },
-      { key: "symbol", label: "symbol", symbols: true },
-      { key: "from", label: "from", digits: 6 },
-      { key: "change", label: "change", digits: 4 },
-      { key: "to", label: "to", digits: 6 },
-      { key: "unit", label: "unit", symbols: true },
-      ...(errors ? [{ key: "inErrors", label: "change over its stated error", digits: 3 }] : []),
-      { key: "reached", label: "share of the shift there", digits: 4 },
-    ],
-    rows: explained.map(({ parameter, change, to, inErrors, reached }) => ({
-      parameter: parameter.name,
-      symbol: parameter.symbol,
-      from: parameter.value,
-      change,
-      to,
-      unit: parameter.unit,
-      inErrors,
-      reached,
-    })),
-    notes: [
-      "changes are linear; the share is what the model at the changed parameter really shows of the shift (1 where linear is enough)",
-      ...(idle.length === 0 ? [] : [`${idle.join(", ")}: no change of it moves ${request.text}`]),
-      ...(impossible.length === 0
-        ? []
-        : [`${impossible.map(({ parameter }) => parameter.name).join(", ")}: there is no such model`]),
-    ],
-  });
-}
-
-function sensitivityChart(columns: readonly Column[], rows: readonly Entry[][]): Chart {
-  const logarithmic = columns.flatMap((column, i) => (column.logarithmic ? [i] : []));
-  const others = columns.flatMap((column, i) => (column.logarithmic ? [] : [[i]]));
-  const panels = [logarithmic, ...others]
-    .filter((indices) => indices.length > 0)
-    .flatMap((indices) =>
-      [false, true].map((perUnit) => {
-        const { logarithmic: ln, request, value } = columns[indices[0]!]!;
-        const top = ln ? `d ln ${indices.length === 1 ? request.text : "quantity"}` : `d ${request.text}`;
-        return {
-          axis: { label: `${top} / d ${perUnit ? "" : "ln "}parameter`, ...(ln ? {} : { unit: value.unit }) },
-          rows: rows
-            .filter((row) => row[0]!.parameter.perUnit === perUnit)
-            .map((row) => ({
-              label: `${row[0]!.parameter.name} ${row[0]!.parameter.symbol}`.trim(),
-              bars: indices.map((i) => ({ group: row[i]!.column.request.text, value: row[i]!.shown })),
-            })),
-        };
-      }),
-    )
-    .filter((panel) => panel.rows.length > 0);
-  const strongest = columns.map(({ request }, i) => {
-    const row = rows.reduce((best, each) => (Math.abs(each[i]!.shown) > Math.abs(best[i]!.shown) ? each : best));
-    return `${request.text} most by ${row[i]!.parameter.name}`;
-  });
-  return barChart({
-    title: "Sensitivity",
-    description: `Derivatives of ${columns.map(({ request }) => request.text).join(", ")} by each parameter, the others held, each panel on a scale of its own; ${strongest.join(", ")}.`,
-    panels,
-  });
 }
