@@ -27,7 +27,7 @@ export function ownKernelArguments(): string[] {
 /** Exit code of our kernel when a port was taken between our choice and its start. */
 const portTakenExitCode = 98;
 const startAttempts = 3;
-const startTimeout = 60_000;
+const startTimeout = 120_000;
 const askAgainAfter = 3000;
 
 export interface ExecuteOptions {
@@ -49,7 +49,8 @@ export interface ExecuteResult {
 type Listener = (message: WireMessage) => void;
 
 /** How long an interrupted cell may take to end before the kernel is given up. */
-const interruptPatience = 5000;
+const interruptPatience = 10_000;
+const interruptAgainAfter = 1000;
 /** How long a kernel may take to answer a shutdown, and then to end. */
 const shutdownPatience = 10_000;
 
@@ -239,6 +240,7 @@ export class KernelClient {
     const { timeout } = options;
     let timer: NodeJS.Timeout | undefined;
     let timedOut = false;
+    const interrupting: Promise<void>[] = [];
     const { reply, idle } = await this.send(
       "execute_request",
       {
@@ -256,13 +258,24 @@ export class KernelClient {
       if (timeout === undefined) return;
       timer = setTimeout(() => {
         timedOut = true;
-        this.interrupt().catch(() => undefined);
-        const complaint = "the kernel did not end the cell when it was interrupted";
-        timer = setTimeout(() => reject(new KernelFailure(complaint)), interruptPatience);
+        // Again and again: the first may arrive before the kernel has begun with the cell.
+        const deadline = Date.now() + interruptPatience;
+        const insist = (): void => {
+          if (Date.now() > deadline) {
+            reject(new KernelFailure("the kernel did not end the cell when it was interrupted"));
+            return;
+          }
+          interrupting.push(this.interrupt().catch(() => undefined));
+          timer = setTimeout(insist, interruptAgainAfter);
+        };
+        insist();
       }, timeout);
     });
     try {
       const [answer] = await Promise.race([Promise.all([reply, idle]), late]);
+      // An interrupt that is still on its way would hit the next cell.
+      clearTimeout(timer);
+      await Promise.all(interrupting);
       return { reply: answer, timedOut };
     } finally {
       clearTimeout(timer);

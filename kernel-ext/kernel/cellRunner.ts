@@ -25,6 +25,8 @@ interface Run {
   last?: { value: unknown };
   /** Ends the wait for the step under way, whatever its code still does. */
   stop(reason: unknown): void;
+  /** Why the run was stopped; it may have been between two steps. */
+  stopped?: { reason: unknown };
 }
 
 type CompileModule = Pick<typeof import("tslab/dist/converter"), "createConverter" | "isCompleteCode">;
@@ -43,7 +45,7 @@ export class CellRunner {
   readonly sources = new CellSources(this.workingDirectory);
   private run: Run | undefined;
 
-  /** @param state one integer shared with the control thread: the {@link phase} */
+  /** @param state shared with the control thread; the first integer is the {@link phase} */
   constructor(private readonly state: Int32Array) {
     this.converters = this.createConverters();
     const { createExecutor } = require("tslab/dist/executor") as ExecuteModule;
@@ -140,9 +142,7 @@ export class CellRunner {
     await new Promise<void>((resolve) => nextTurn(resolve));
     if (context.cancelled) outcome = this.interrupted(context);
     else if (!outcome.error && context.rejections.size > 0) outcome = this.rejected(context);
-    context.ended = true;
-    this.run = undefined;
-    Atomics.store(this.state, 0, phase.idle);
+    if (this.run === run) this.abandon();
     return outcome;
   }
 
@@ -152,10 +152,16 @@ export class CellRunner {
    */
   private apart<T>(run: Run, work: () => Promise<T>): Promise<T> {
     return new Promise<T>((resolve, reject) => {
-      run.stop = reject;
+      run.stop = (reason) => {
+        run.stopped = { reason };
+        reject(reason);
+      };
       nextTurn(() => {
         queueMicrotask(() => {
-          if (run.context.cancelled) return;
+          if (run.stopped) {
+            reject(run.stopped.reason);
+            return;
+          }
           runInContext(run.context, () => {
             work().then(resolve, reject);
           });
@@ -213,6 +219,13 @@ export class CellRunner {
     this.executor.interrupt();
     run.stop(thrown);
     return true;
+  }
+
+  /** Forgets the cell that ran: it has ended, or was interrupted and never came to its end. */
+  abandon(): void {
+    if (this.run) this.run.context.ended = true;
+    this.run = undefined;
+    Atomics.store(this.state, 0, phase.idle);
   }
 
   complete(code: string, position: number): CompletionInfo {

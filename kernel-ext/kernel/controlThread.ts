@@ -10,6 +10,7 @@ import { type ConnectionInfo, socketAddress, WireCodec, WireError, type WireMess
 
 export interface ControlThreadData {
   info: ConnectionInfo;
+  /** The phase of the main thread, and the number of the last request that it has begun to answer. */
   state: Int32Array;
   /** The process without which this one has no purpose. */
   parent: number;
@@ -58,20 +59,22 @@ const stackExpression = `(() => {
 /**
  * Ends the code that the main thread runs, if it is the user's.
  *
+ * @param stillAsked whether the main thread has not begun to answer yet
  * @param idleBefore whether the thread was seen without code before and has not answered since: then it goes from one
  *   microtask to the next without end, for an idle thread answers at once
  * @param seen takes whether the thread was seen without code this time
  */
-function endUserCode(idleBefore: boolean, seen: (nobody: boolean) => void): void {
+function endUserCode(stillAsked: () => boolean, idleBefore: boolean, seen: (nobody: boolean) => void): void {
   const session = new Session();
   session.connectToMainThread();
   session.post("Runtime.evaluate", { expression: stackExpression, returnByValue: true }, (error, answer) => {
     const stack = error ? "" : String((answer as { result?: { value?: unknown } }).result?.value ?? "");
     const owner = stackOwner(stack);
-    seen(owner === "nobody");
-    if (owner === "user" || (owner === "nobody" && idleBefore)) {
-      session.post("Runtime.terminateExecution", () => session.disconnect());
-    } else session.disconnect();
+    const ends = stillAsked() && (owner === "user" || (owner === "nobody" && idleBefore));
+    // After code was ended the thread needs time to answer; it must be seen idle twice again.
+    seen(owner === "nobody" && !ends);
+    if (ends) session.post("Runtime.terminateExecution", () => session.disconnect());
+    else session.disconnect();
   });
 }
 
@@ -102,8 +105,10 @@ async function serve(port: MessagePort, data: ControlThreadData): Promise<void> 
     let idleBefore = false;
     return setInterval(() => {
       post({ type: "request", id, message });
-      if (!endsCode || Atomics.load(data.state, 0) !== phase.running) return;
-      endUserCode(idleBefore, (nobody) => {
+      const stillAsked = (): boolean =>
+        unanswered.has(id) && Atomics.load(data.state, 1) < id && Atomics.load(data.state, 0) === phase.running;
+      if (!endsCode || !stillAsked()) return;
+      endUserCode(stillAsked, idleBefore, (nobody) => {
         idleBefore = nobody;
       });
     }, patience);

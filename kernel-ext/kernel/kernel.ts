@@ -26,7 +26,15 @@ export interface KernelParts {
 interface Waiting {
   message: WireMessage;
   aborted: boolean;
+  /** How many ticks ago the cell of the request was interrupted. */
+  ticksSinceInterrupt?: number;
+  errorPublished?: boolean;
+  /** The request was answered in place of its handler, which has been lost. */
+  rescued?: boolean;
 }
+
+/** Ticks after an interrupt at which the handler of the cell is taken for lost. */
+const rescueAfter = 3;
 
 type Reply = { type: string; content: JsonObject } | undefined;
 
@@ -39,7 +47,8 @@ export class Kernel {
   private readonly history = new History();
   private readonly waiting: Waiting[] = [];
   private readonly cells: CellContext[] = [];
-  private handling = false;
+  /** The request that is being handled. */
+  private current: Waiting | undefined;
   /** Execution count. */
   private count = 0;
   /** All runs of code, also those that are not counted. */
@@ -86,30 +95,29 @@ export class Kernel {
   }
 
   private handleNext(): void {
-    if (this.handling) return;
+    if (this.current) return;
     const next = this.waiting.shift();
     if (!next) return;
-    this.handling = true;
-    this.handle(next).then(
-      () => {
-        this.handling = false;
-        this.handleNext();
-      },
-      (error: unknown) => {
-        this.parts.log(`a ${next.message.header.msg_type} failed: ${(error as Error)?.stack ?? error}`);
-        this.handling = false;
-        this.handleNext();
-      },
-    );
+    this.current = next;
+    const done = (): void => {
+      if (next.rescued) return;
+      this.current = undefined;
+      this.handleNext();
+    };
+    this.handle(next).then(done, (error: unknown) => {
+      this.parts.log(`a ${next.message.header.msg_type} failed: ${(error as Error)?.stack ?? error}`);
+      done();
+    });
   }
 
-  private async handle({ message, aborted }: Waiting): Promise<void> {
+  private async handle(waiting: Waiting): Promise<void> {
+    const { message, aborted } = waiting;
     const { header } = message;
     this.parts.publisher.status("busy", header);
     let reply: Reply;
     try {
       if (header.msg_type === "execute_request") {
-        reply = { type: "execute_reply", content: aborted ? { status: "aborted" } : await this.execute(message) };
+        reply = { type: "execute_reply", content: aborted ? { status: "aborted" } : await this.execute(waiting) };
       } else reply = this.answer(message);
     } catch (error) {
       const { ename, evalue, traceback } = describeThrown(error, this.parts.runner.sources);
@@ -121,6 +129,7 @@ export class Kernel {
     }
     // What the request published is on its way before the reply is: who sees the reply may stop listening.
     await this.parts.publisher.drain();
+    if (waiting.rescued) return;
     if (reply) this.parts.shell.push(this.replyFrames(reply, message));
     this.parts.publisher.status("idle", header);
   }
@@ -178,8 +187,8 @@ export class Kernel {
 
   // ---- cells
 
-  private async execute(message: WireMessage): Promise<JsonObject> {
-    const { content, header } = message;
+  private async execute(waiting: Waiting): Promise<JsonObject> {
+    const { content, header } = waiting.message;
     const code = requiredText(content, "code");
     const silent = content.silent === true;
     const stored = !silent && content.store_history !== false;
@@ -187,6 +196,7 @@ export class Kernel {
     const count = this.count;
     if (!silent) this.parts.publisher.publish("execute_input", { code, execution_count: count }, header);
     const outcome = await this.runCell(code, header, silent, stored ? `cell [${count}]` : "unnumbered cell");
+    if (waiting.rescued) return {};
     if (outcome.result && !silent) {
       this.parts.publisher.publish(
         "execute_result",
@@ -197,6 +207,7 @@ export class Kernel {
     if (stored) this.history.add(count, code, (outcome.result?.["text/plain"] as string | undefined) ?? null);
     if (outcome.error) {
       if (!silent) this.parts.publisher.error(outcome.error, header);
+      waiting.errorPublished = true;
       if (content.stop_on_error !== false) await this.abortWaiting();
       const { ename, evalue, traceback } = outcome.error;
       return { status: "error", execution_count: count, ename, evalue, traceback, user_expressions: {}, payload: [] };
@@ -258,8 +269,36 @@ export class Kernel {
   /** Stops the running cell; without one, stops what ended cells have left running. */
   interrupt(): void {
     leaveContext();
-    if (this.parts.runner.interrupt()) return;
+    if (this.parts.runner.interrupt()) {
+      if (this.current) this.current.ticksSinceInterrupt ??= 0;
+      return;
+    }
     for (const context of this.cells) context.cancelled = true;
+  }
+
+  /**
+   * Called about once a second. Ending code by force may drop continuations of the kernel's own that were queued behind it;
+   * an interrupted cell whose handler never comes back is ended here, for a kernel that hangs is worse than any error.
+   */
+  tick(): void {
+    const { current } = this;
+    if (current?.ticksSinceInterrupt === undefined || !this.parts.publisher.isDrained()) return;
+    current.ticksSinceInterrupt++;
+    if (current.ticksSinceInterrupt < rescueAfter) return;
+    const { header, content } = current.message;
+    current.rescued = true;
+    this.current = undefined;
+    this.parts.runner.abandon();
+    const error = describeThrown(new InterruptError(), this.parts.runner.sources);
+    if (content.silent !== true && !current.errorPublished) this.parts.publisher.error(error, header);
+    for (const one of this.waiting) {
+      if (content.stop_on_error !== false && one.message.header.msg_type === "execute_request") one.aborted = true;
+    }
+    const { ename, evalue, traceback } = error;
+    const reply = { status: "error", execution_count: this.count, ename, evalue, traceback };
+    this.parts.shell.push(this.replyFrames({ type: "execute_reply", content: reply }, current.message));
+    this.parts.publisher.status("idle", header);
+    this.handleNext();
   }
 
   // ---- failures that no cell catches

@@ -83,7 +83,7 @@ function connectTslabDisplay(kernel: Kernel): void {
 async function main(connectionFile: string): Promise<void> {
   const info = readConnectionFile(connectionFile);
   const codec = new WireCodec(info.key, true);
-  const state = new Int32Array(new SharedArrayBuffer(4));
+  const state = new Int32Array(new SharedArrayBuffer(8));
   const { version } = JSON.parse(readFileSync(join(__dirname, "..", "..", "..", "package.json"), "utf8")) as {
     version: string;
   };
@@ -128,6 +128,8 @@ async function main(connectionFile: string): Promise<void> {
   let answered = 0;
   const answerControl = (id: number, message: WireMessage): void => {
     if (!kernel || id <= answered) return;
+    // Seen by the control thread at once, before the reply has found its way there.
+    Atomics.store(state, 1, id);
     const frames = kernel.control(message);
     answered = id;
     toControl({ type: "reply", id, frames });
@@ -163,6 +165,7 @@ async function main(connectionFile: string): Promise<void> {
       iopub.revive();
       shell.revive();
       receiver.revive();
+      if (message.type === "tick") kernel.tick();
     }
   });
 

@@ -40,6 +40,11 @@ export class Publisher {
     this.publish(type, { data: portableBundle(bundle), metadata: {}, transient }, parent);
   }
 
+  /** Whether nothing waits to be sent. */
+  isDrained(): boolean {
+    return this.queue.waiting === 0;
+  }
+
   /** Resolves when all of it has been handed over. */
   drain(): Promise<void> {
     return this.queue.drain();
