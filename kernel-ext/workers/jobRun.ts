@@ -8,7 +8,7 @@ import { HubbleSolver } from "./solveHubble";
 
 /** A slice of a chunk takes about so many milliseconds, so that a stop is heard and progress seen. */
 const sliceTime = 20;
-const firstSlice = 32;
+const firstSlice = 16;
 
 /** Whether the batch engine knows these shared givens: w by formula or table and published fits are the full computation's. */
 export function engineServes(shared: ModelGivens | undefined): boolean {
@@ -55,7 +55,7 @@ export class JobRun {
   /** Does the next slice; false when nothing is left, or the job is to stop. */
   step(): boolean {
     const { job } = this;
-    if (Atomics.load(job.control, control.stop) !== 0) return false;
+    if (this.stopped()) return false;
     if (this.at >= this.end) {
       const from = Atomics.add(job.control, control.nextChunk, 1) * chunkRows;
       if (from >= job.rows) return false;
@@ -73,11 +73,15 @@ export class JobRun {
     return true;
   }
 
+  private stopped(): boolean {
+    return Atomics.load(this.job.control, control.stop) !== 0;
+  }
+
   private compute(from: number, to: number): void {
     const { job, plan, full, solver } = this;
     const { hubble, status } = job;
     if (plan === undefined) {
-      for (let row = from; row < to; row++) status[row] = full.run(row);
+      for (let row = from; row < to && !this.stopped(); row++) status[row] = full.run(row);
       return;
     }
     if (solver === undefined || hubble === undefined) {
@@ -91,7 +95,7 @@ export class JobRun {
     };
     plan.run(this.columns, { from, to }, this.out, { push: report }, status);
     for (let row = from; row < to; row++) {
-      if (!unsolved(row)) continue;
+      if (!unsolved(row) || this.stopped()) continue;
       status[row] = full.run(row);
       if (status[row] === rowStatus.engine) status[row] = rowStatus.outsideRange;
     }

@@ -61,8 +61,32 @@ export class WorkerPool {
     Atomics.store(running.job.control, control.stop, 1);
     this.jobs.set(id, { ...running, listener: silent });
     later(() => {
-      for (const worker of running.open) this.remove(worker, new WorkerFailedError("ended by force after a stop"));
+      for (const worker of [...running.open]) this.replace(worker);
     }, stopPatience).unref();
+  }
+
+  /**
+   * Ends a worker that does not heed a stop. What waits behind the stopped job goes to a new one: the old one has taken no row of it.
+   */
+  private replace(worker: Worker): void {
+    const place = this.workers.indexOf(worker);
+    if (place < 0) return;
+    this.workers.splice(place, 1);
+    const waiting: RunningJob[] = [];
+    for (const running of [...this.jobs.values()]) {
+      if (!running.open.delete(worker)) continue;
+      if (Atomics.load(running.job.control, control.stop) === 0) waiting.push(running);
+      else if (running.open.size === 0) this.jobs.delete(running.job.id);
+    }
+    if (waiting.length > 0) {
+      const fresh = this.add();
+      fresh.ref();
+      for (const running of waiting) {
+        running.open.add(fresh);
+        fresh.postMessage(running.job);
+      }
+    }
+    void worker.terminate();
   }
 
   /** Threads that are alive. */
@@ -77,7 +101,7 @@ export class WorkerPool {
     );
   }
 
-  private add(): void {
+  private add(): Worker {
     const worker = new Worker(workerFile());
     worker.on("message", (message: FromWorker) => {
       if (message.type === "ready") return;
@@ -92,6 +116,7 @@ export class WorkerPool {
     worker.on("exit", (code) => this.remove(worker, new WorkerFailedError(`a worker thread ended with code ${code}`)));
     worker.unref();
     this.workers.push(worker);
+    return worker;
   }
 
   private partDone(running: RunningJob, worker: Worker): void {
