@@ -88,7 +88,7 @@ export function expansionCell(model: ModelGivens, options: ExpansionCellOptions 
   checkOptions(options, ["redshifts"], where);
   const numbers = evaluateModel(compileModel(model, where), { where });
   const turning = numbers.evaluation.once(turningRedshiftPart);
-  const end = turning === undefined ? farthest : Math.min(farthest, 0.98 * turning);
+  const end = turning === undefined ? farthest : Math.min(farthest, Number((0.98 * turning).toPrecision(6)));
   const grid = Float64Array.from(spacedRedshifts(0, end, 300, "onePlusRedshift"));
   const asked = options.redshifts === undefined ? undefined : redshiftList(options.redshifts, where);
 
@@ -122,7 +122,9 @@ export function expansionCell(model: ModelGivens, options: ExpansionCellOptions 
   const marks = [
     { at: epoch("equalityRedshift"), label: "equality z_eq" },
     { at: acceleration, label: "acceleration z_acc" },
-  ].flatMap(({ at, label }) => (at !== undefined && at >= 0 && at <= end ? [{ axis: "x" as const, at, label }] : []));
+  ].flatMap(({ at, label }) =>
+    at !== undefined && at >= 0 && at <= end ? [{ axis: "x" as const, at: Number(at.toPrecision(6)), label }] : [],
+  );
 
   const rowsAt = asked ?? Float64Array.from(tableRedshifts.filter((z) => z <= end));
   const listed = historyAt(numbers, rowsAt, asked !== undefined);

@@ -88,6 +88,8 @@ export function timelineCell(model: ModelGivens): CellResult<TimelineValues> {
   const grid = spacedRedshifts(0, Math.max(1, 3 * earliest), 160, "onePlusRedshift").reverse();
   const toYears = 1e9;
   const yearsAt = (z: number) => toYears * numbers.value("ageAt", z);
+  // Digits that can be seen: a picture should not hang on the last bit of a quadrature.
+  const drawn = (value: number) => Number(value.toPrecision(6));
   const name = "events";
   const chart = lineChart({
     title: cold ? "Expansion over age" : "Temperature over age",
@@ -99,14 +101,14 @@ export function timelineCell(model: ModelGivens): CellResult<TimelineValues> {
       symbol: "t",
       unit: "yr",
       scale: "log",
-      domain: [yearsAt(grid[0]!), 1.5 * yearsAt(0)],
+      domain: [drawn(yearsAt(grid[0]!)), drawn(1.5 * yearsAt(0))],
     },
     y: {
       label: cold ? "1 + z" : "radiation temperature",
       ...(cold ? {} : { symbol: "T", unit: "K" }),
       scale: "log",
       // Room below today for the names of the late events, which are pushed down where they are close.
-      domain: [level(0) * (level(0) / level(grid[0]!)) ** 0.12, 2 * level(grid[0]!)],
+      domain: [drawn(level(0) * (level(0) / level(grid[0]!)) ** 0.12), drawn(2 * level(grid[0]!))],
     },
     series: [{ label: name, x: grid.map(yearsAt), y: grid.map(level) }],
     points: [
@@ -118,7 +120,7 @@ export function timelineCell(model: ModelGivens): CellResult<TimelineValues> {
     ],
     rules: found.map((each) => ({
       axis: "y" as const,
-      at: level(each.redshift),
+      at: drawn(level(each.redshift)),
       label: `${each.label}, z ${formatNumber(each.redshift, { digits: each.redshift < 1000 ? 3 : 4 })}`,
     })),
     height: 440,
