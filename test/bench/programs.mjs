@@ -213,7 +213,11 @@ export function timePrograms(say, short) {
     rounds: sizes.rounds,
     comparison,
     timed,
-    oneModel: { first: { wall: one[0], processor: one[1] }, later: { wall: one[2], processor: one[3] } },
+    oneModel: {
+      first: { wall: one[0], processor: one[1] },
+      newPlan: { wall: one[2], processor: one[3] },
+      samePlan: { wall: one[4], processor: one[5] },
+    },
   };
 }
 
