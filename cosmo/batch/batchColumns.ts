@@ -1,5 +1,5 @@
 import { DomainError, UnknownNameError } from "../errors";
-import { type ModelGivens, modelFieldByName, modelFields, validateGivens } from "../model";
+import { type DarkEnergyGivens, type ModelGivens, modelFieldByName, modelFields, validateGivens } from "../model";
 
 /** Values of one field for all rows: a column, or one number for all; for `neutrinos.masses` a list of up to three of them. */
 export type BatchColumn = Float64Array | number | readonly (Float64Array | number)[];
@@ -26,6 +26,8 @@ export interface BoundColumns {
   readonly masses: readonly Slot[] | undefined;
   /** Fields given by a word for all rows. */
   readonly words: ReadonlyMap<string, string>;
+  /** Dark energy by a formula or a table, shared by all rows: for the single path, the engine does not march it. */
+  readonly darkEnergy: Pick<DarkEnergyGivens, "equation" | "table">;
 }
 
 const where = "batch";
@@ -77,12 +79,20 @@ export function bindColumns(columns: BatchColumns, shared: ModelGivens, to: numb
       throw new DomainError({ where, argument: name, rule: `must have ${to} rows`, value: slot.column.length });
     }
   }
-  return { numbers, masses, words };
+  // Formulas and tables are objects; the flat givens hold only their names.
+  const { equation, table } = shared.darkEnergy ?? {};
+  const darkEnergy = { ...(equation === undefined ? {} : { equation }), ...(table === undefined ? {} : { table }) };
+  for (const name of Object.keys(darkEnergy)) {
+    numbers.delete(`darkEnergy.${name}`);
+    words.delete(`darkEnergy.${name}`);
+  }
+  return { numbers, masses, words, darkEnergy };
 }
 
 /** The givens of one row as a model object, for the single path. */
 export function givensOfRow(bound: BoundColumns, row: number): ModelGivens {
-  const givens: Record<string, unknown> = {};
+  const givens: Record<string, unknown> =
+    Object.keys(bound.darkEnergy).length > 0 ? { darkEnergy: bound.darkEnergy } : {};
   const put = (name: string, value: unknown) => {
     const [group, inner] = name.split(".");
     if (inner === undefined) givens[name] = value;

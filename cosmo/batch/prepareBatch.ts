@@ -5,6 +5,7 @@ import { findQuantity, parseRequest, type QuantityRequest } from "../quantities"
 import { Evaluation } from "../quantity";
 import { type BatchColumns, type BoundColumns, bindColumns, givensOfRow } from "./batchColumns";
 import { type EngineOutput, engineOutput, needsOf } from "./engineOutputs";
+import { engineServes } from "./engineServes";
 import { requireStructure } from "./requireStructure";
 import { RowEngine } from "./rowEngine";
 import { rowStatus, rowStatusNames } from "./rowStatus";
@@ -87,7 +88,8 @@ export function prepareBatch(request: BatchRequest): BatchPlan {
   const needs = needsOf(served.filter((each) => each !== undefined));
   const allMatter = flat.get("conventions.equalityMatter") === "allMatter";
   const engine = new RowEngine(constants, tier === "peebles" ? "peebles" : "calibrated", allMatter, needs);
-  const single = requests.filter((_, i) => served[i] === undefined);
+  const marches = engineServes(flat);
+  const single = requests.filter((_, i) => !marches || served[i] === undefined);
 
   return {
     outputs: requests.map((each) => each.text),
@@ -109,7 +111,7 @@ export function prepareBatch(request: BatchRequest): BatchPlan {
       const singleTargets = targets.filter((_, i) => served[i] === undefined);
       const tally = new Int32Array(rowStatusNames.length);
       for (let index = rows.from; index < rows.to; index++) {
-        let code = engine.compute(index);
+        let code = marches ? engine.compute(index) : rowStatus.notServed;
         if (code === rowStatus.engine) {
           for (let k = 0; k < readers.length; k++) {
             const value = readers[k](engine);
@@ -119,7 +121,7 @@ export function prepareBatch(request: BatchRequest): BatchPlan {
         }
         if (code !== rowStatus.engine) code = path.run(index, requests, targets, code);
         else if (single.length > 0) {
-          code = path.run(index, single, singleTargets, tier === "saha" ? rowStatus.tier : rowStatus.engine);
+          code = path.run(index, single, singleTargets, tier === "saha" ? rowStatus.notServed : rowStatus.engine);
         }
         tally[code]++;
         if (status !== undefined) status[index] = code;

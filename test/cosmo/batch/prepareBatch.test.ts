@@ -97,9 +97,25 @@ describe("prepareBatch(request)", () => {
     expect(values[0]).toBe(evaluateModel(givens).value("acousticAngle"));
   });
 
+  it("sends what the engine does not march through the single path: fits by convention, dark energy by formula or table", () => {
+    const cases: ModelGivens[] = [
+      { ...base, conventions: { lastScattering: "huSugiyama1996" } },
+      { ...base, conventions: { soundHorizon: "eisensteinHu1998" } },
+      { ...base, darkEnergy: { equation: { text: "-0.9 + 0.3 z", variable: "z", evaluate: (z) => -0.9 - 0.1 * z } } },
+      { ...base, darkEnergy: { table: { redshifts: [0, 0.5, 1, 2], values: [-0.9, -0.95, -1, -1.1] } } },
+    ];
+    for (const givens of cases) {
+      const { values, status } = runOne(givens, ["acousticAngle", "age"]);
+      expect(status).toBe(rowStatus.notServed);
+      const single = evaluateModel(givens);
+      expect(values).toEqual([single.value("acousticAngle"), single.value("age")]);
+      expect(values[0]).not.toBe(evaluateModel(base).value("acousticAngle"));
+    }
+  });
+
   it("sends tier saha through the single path, but not what hangs on no recombination", () => {
     const givens: ModelGivens = { ...base, recombination: "saha" };
-    expect(runOne(givens, ["lastScatteringRedshift"]).status).toBe(rowStatus.tier);
+    expect(runOne(givens, ["lastScatteringRedshift"]).status).toBe(rowStatus.notServed);
     expect(runOne(givens, ["lastScatteringRedshift"]).values[0]).toBe(
       evaluateModel(givens).value("lastScatteringRedshift"),
     );
