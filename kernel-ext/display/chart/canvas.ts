@@ -31,6 +31,8 @@ interface TextLook {
   readonly angle?: number;
 }
 
+const order = ["rect", "line", "rule", "text"];
+
 const tenth = (value: number): number => Math.round(value * 10) / 10;
 
 /** Collects marks and gives them as one view. */
@@ -110,7 +112,10 @@ export class Canvas {
     });
     const x = position("x", [0, this.width]);
     const y = position("y", [this.height, 0]);
-    const layer = [...this.layers.values()].map(({ mark, values }) => {
+    // Areas below, words above, whatever came first.
+    const height = ({ mark }: { mark: Record<string, unknown> }) => order.indexOf(mark["type"] as string);
+    const sorted = [...this.layers.values()].sort((a, b) => height(a) - height(b));
+    const layer = sorted.map(({ mark, values }) => {
       const type = mark["type"];
       const encoding =
         type === "text"
