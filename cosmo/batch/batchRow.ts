@@ -32,8 +32,8 @@ export class BatchRow {
   speciesDensity = 0.5;
   /** Different masses above zero: their number, ln of m c^2/(k T_nu) today and how many species share each. */
   massCount = 0;
-  readonly logMassRatios = new Float64Array(3);
-  readonly massShares = new Float64Array(3);
+  readonly logMassRatios: Float64Array = new Float64Array(3);
+  readonly massShares: Float64Array = new Float64Array(3);
   /** n_H today, 1/m3, and f_He. */
   hydrogenDensity = 0.5;
   heliumRatio = 0.5;

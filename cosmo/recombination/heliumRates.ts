@@ -128,13 +128,11 @@ export function heliumLogitRate(
     atoms.heliumTwoPhotonRate;
   const throughSinglets = (toSinglet * singletDecay) / (singletDecay + singletIonization);
 
-  const tripletIonization =
-    (4 / 3) * toTriplet * states * Math.exp(-(atoms.heliumLimit - atoms.heliumTriplet2s) * perLevel);
-  const tripletDecay =
-    atoms.heliumTripletRate *
-    lineEscape(tripletLine, gas, constants) *
-    Math.exp(-(atoms.heliumTriplet2p - atoms.heliumTriplet2s) * perLevel);
-  const throughTriplets = toTriplet / (1 + tripletIonization / tripletDecay);
+  // b_t over A_t P_t e^(-(L_3P - L_3S)/kT), the exponents joined: late, each alone underflows to 0/0.
+  const tripletBalance =
+    ((4 / 3) * toTriplet * states * Math.exp(-(atoms.heliumLimit - atoms.heliumTriplet2p) * perLevel)) /
+    (atoms.heliumTripletRate * lineEscape(tripletLine, gas, constants));
+  const throughTriplets = toTriplet / (1 + tripletBalance);
 
   return net * (throughSinglets + throughTriplets);
 }

@@ -105,3 +105,16 @@ describe("lymanAlphaCorrection", () => {
     expect(lymanAlphaCorrection(200)).toBeCloseTo(1, 4);
   });
 });
+
+describe("a background much hotter than ours", () => {
+  it("is followed to today although every exponential of helium underflows on the way", () => {
+    for (const photonTemperature of [1, 5, 10]) {
+      const numbers = evaluateModel({ ...base, photonTemperature });
+      // Last scattering is near 3000 K whatever the temperature today (common practice, no source).
+      const temperature = numbers.value("radiationTemperature", numbers.value("lastScatteringRedshift"));
+      expect(temperature).toBeGreaterThan(2500);
+      expect(temperature).toBeLessThan(4200);
+      expect(numbers.value("residualIonizedFraction", 0)).toBeGreaterThan(0);
+    }
+  });
+});
