@@ -198,7 +198,9 @@ async function throughEngine(
   tell: (text: string) => void,
 ): Promise<RowCount> {
   const { fill, digits, workers } = options;
-  const count = await runFast({ ...work, plan, fill, digits, workers, typed: !isText(options.inputFormat) });
+  const typed = !isText(options.inputFormat);
+  const text = isText(options.outputFormat);
+  const count = await runFast({ ...work, plan, fill, digits, workers, typed, text });
   if (count.full > 0) {
     tell(
       `${count.full} of ${count.rows} rows took the full computation: outside the batch engine's range, or no plain numbers`,

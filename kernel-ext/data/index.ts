@@ -6,5 +6,5 @@ export { type RowProblem, shownPiece, TableError, type TableErrorFields } from "
 export { formatByName, formatOfFile, knownFormats, type TableFormat } from "./tableFormat";
 export { type TableOutput, type TableOutputOptions, tableOutput } from "./tableOutput";
 export { type CellValue, openTable, type TableReader, type TableRow } from "./tableReader";
-export { roundDigits, type TableWriter, tableWriter } from "./tableWriter";
+export { digitsText, roundDigits, type TableWriter, tableWriter } from "./tableWriter";
 export { ClosedPipeError, fileReason, openStream, type TextSink, wholeFile } from "./wholeFile";

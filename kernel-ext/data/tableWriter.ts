@@ -38,6 +38,23 @@ export function roundDigits(value: number, digits: number): number {
   return Number(value.toPrecision(digits));
 }
 
+/**
+ * The text of a number rounded to so many significant digits: what {@link tableWriter} makes of {@link roundDigits}, at half the cost, which shows
+ * in a million rows.
+ *
+ * @example digitsText(13.792749503791248, 4) // "13.79"
+ */
+export function digitsText(value: number, digits: number): string {
+  if (!Number.isFinite(value)) throw new RangeError(`digitsText: value must be finite, got ${value}`);
+  const text = value.toPrecision(digits);
+  // Beyond 15 digits a double may have a shorter text.
+  if (digits > 15 || value === 0 || text.includes("e")) return numberText(Number(text));
+  let end = text.length;
+  if (!text.includes(".")) return text;
+  while (text.charCodeAt(end - 1) === 0x30) end--;
+  return text.slice(0, text.charCodeAt(end - 1) === 0x2e ? end - 1 : end);
+}
+
 function delimitedWriter(format: "csv" | "tsv", columns: readonly string[], added: readonly string[]): TableWriter {
   const settings = {
     delimiter: format === "csv" ? "," : "\t",

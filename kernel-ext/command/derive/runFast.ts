@@ -1,6 +1,6 @@
 import { rowStatus } from "../../../cosmo/batch";
 import { DataRowError } from "../../../cosmo/errors";
-import { type CellValue, roundDigits, type TableRow } from "../../data";
+import { type CellValue, digitsText, roundDigits, type TableRow } from "../../data";
 import { type BatchRun, runBatch } from "../../workers";
 import type { FillValues } from "./fill";
 import type { FastPlan } from "./planFast";
@@ -15,6 +15,8 @@ export interface FastWork extends RowWork {
   readonly digits: number;
   /** Whether cells come typed (JSON lines). */
   readonly typed: boolean;
+  /** Whether the rows go out as text (CSV), so that numbers may be written here. */
+  readonly text: boolean;
   /** Undefined: one a core. */
   readonly workers: number | undefined;
 }
@@ -74,6 +76,9 @@ async function writeBlock(
 ): Promise<void> {
   const columns = Object.values(run.columns);
   const { keepWith, digits } = work;
+  const cell = work.text
+    ? (value: number): CellValue => digitsText(value, digits)
+    : (value: number): CellValue => roundDigits(value, digits);
   for (let index = 0; index < rows.length; index++) {
     const row = rows[index]!;
     const status = run.status[index]!;
@@ -81,7 +86,7 @@ async function writeBlock(
     if (single || status !== rowStatus.engine) count.full++;
     let added: CellValue[];
     try {
-      added = single ? work.derive(row) : columns.map((column) => roundDigits(column[index]!, digits));
+      added = single ? work.derive(row) : columns.map((column) => cell(column[index]!));
       if (keepWith !== undefined) added.push(null);
     } catch (error) {
       if (!(error instanceof DataRowError)) throw error;
