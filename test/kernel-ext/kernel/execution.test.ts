@@ -70,7 +70,7 @@ describe("an import", () => {
     );
     expect(
       await session.value(
-        'import { evaluateModel as evaluate } from "cosmology-cells/cosmo";\nevaluate === evaluateModel',
+        'import { evaluateModel as evaluate } from "cosmology-cells/cosmo";\nconst base = { hubble: 67.4, baryonDensity: 0.0224, coldMatterDensity: 0.12 };\nevaluate(base).model.constructor === evaluateModel(base).model.constructor && evaluate(base).value("age") === evaluateModel(base).value("age") && evaluate(base) instanceof evaluateModel(base).constructor',
       ),
     ).toBe("true");
     const wrong = await session.run('import { formatNumber as f } from "cosmology-cells";\nf({});');
