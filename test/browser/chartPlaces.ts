@@ -3,7 +3,7 @@ export interface ChartPlaces {
   /** Size of the picture in pixels. */
   readonly width: number;
   readonly height: number;
-  /** Size of the rectangle around everything drawn with a stroke: grid, axes, curves. */
+  /** Size of the rectangle around everything drawn with a stroke (grid, axes, curves); around the fields of a chart that has none. */
   readonly plotWidth: number;
   readonly plotHeight: number;
   /** How many marks carry data: filled or stroked paths. */
@@ -19,7 +19,9 @@ export interface ChartPlaces {
 export function measureCharts(selector: string): string {
   return `[...document.querySelectorAll(${JSON.stringify(selector)})].map((svg) => {
     const frame = svg.getBoundingClientRect();
-    const boxes = [...svg.querySelectorAll("line[stroke], path[stroke]")].map((mark) => mark.getBoundingClientRect());
+    const stroked = [...svg.querySelectorAll("line[stroke], path[stroke]")];
+    const drawn = stroked.length > 0 ? stroked : [...svg.querySelectorAll("path[fill]")];
+    const boxes = drawn.map((mark) => mark.getBoundingClientRect());
     const left = Math.min(...boxes.map((box) => box.left)), right = Math.max(...boxes.map((box) => box.right));
     const top = Math.min(...boxes.map((box) => box.top)), bottom = Math.max(...boxes.map((box) => box.bottom));
     const marks = [...svg.querySelectorAll("path[stroke], path[fill]")].filter((mark) => {
@@ -48,4 +50,15 @@ export const axisTitles: { readonly [notebook: string]: readonly (readonly strin
     ["1 + z", "comoving sound horizon r_s [Mpc]"],
     ["100 θ_*", "l_A"],
   ],
+  "3-forecast-chain.ipynb": [
+    ["H_0 [km/s/Mpc]", "r_drag [Mpc]", "100 θ_*"],
+    ["H_0 [km/s/Mpc]", "ω_b", "D_V(1.1) [Mpc]"],
+    ["H_0", "r_drag", "D_V(1.1)"],
+    ["distance", "ruler", "ratio"],
+    ["distance", "ruler", "ratio"],
+    ["distance", "ruler", "ratio"],
+  ],
 };
+
+/** Notebooks whose charts are made of many small plots, a matrix of pairs or a row of distributions. */
+export const smallPlots: ReadonlySet<string> = new Set(["3-forecast-chain.ipynb"]);

@@ -3,7 +3,7 @@ import { existsSync } from "node:fs";
 import type { Browser, Page } from "playwright-core";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { demoFolder, demoNames } from "../notebooks-demo/demoNotebooks";
-import { axisTitles, type ChartPlaces, measureCharts } from "./chartPlaces";
+import { axisTitles, type ChartPlaces, measureCharts, smallPlots } from "./chartPlaces";
 import { launchChromium, missing, screenshot, watchRequests, withoutChromium } from "./chromium";
 import { NotebookServer, notebookProgram } from "./notebookServer";
 
@@ -81,11 +81,12 @@ describe.skipIf(withoutChromium() || missing(notebookProgram))("the demo noteboo
       it("every chart is drawn, with its plot area, its marks and the titles of its axes", () => {
         expect(charts.length).toBe(axisTitles[name]!.length);
         for (const [index, chart] of charts.entries()) {
-          expect(chart.width).toBeGreaterThan(400);
-          expect(chart.height).toBeGreaterThan(250);
-          expect(chart.plotWidth).toBeGreaterThan(300);
-          expect(chart.plotHeight).toBeGreaterThan(150);
-          expect(chart.marks).toBeGreaterThan(5);
+          const small = smallPlots.has(name);
+          expect(chart.width).toBeGreaterThan(small ? 180 : 400);
+          expect(chart.height).toBeGreaterThan(small ? 120 : 250);
+          expect(chart.plotWidth).toBeGreaterThan(small ? 60 : 300);
+          expect(chart.plotHeight).toBeGreaterThan(small ? 40 : 150);
+          expect(chart.marks).toBeGreaterThan(small ? 2 : 5);
           for (const title of axisTitles[name]![index]!) {
             expect(
               chart.texts.some((text) => text.includes(title)),
