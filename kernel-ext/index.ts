@@ -54,3 +54,4 @@ export {
   table,
   type VegaLiteSpec,
 } from "./display";
+export { type BatchRun, type RunOptions, runBatch } from "./workers";

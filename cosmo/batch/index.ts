@@ -1,4 +1,5 @@
 export type { BatchColumn, BatchColumns } from "./batchColumns";
+export { engineServes } from "./engineServes";
 export {
   type BatchCounts,
   type BatchPlan,

@@ -88,7 +88,7 @@ export function prepareBatch(request: BatchRequest): BatchPlan {
   const needs = needsOf(served.filter((each) => each !== undefined));
   const allMatter = flat.get("conventions.equalityMatter") === "allMatter";
   const engine = new RowEngine(constants, tier === "peebles" ? "peebles" : "calibrated", allMatter, needs);
-  const marches = engineServes(flat);
+  const marches = engineServes(shared);
   const single = requests.filter((_, i) => !marches || served[i] === undefined);
 
   return {

@@ -1,5 +1,4 @@
-import { type BatchPlan, type BatchProblem, prepareBatch, rowStatus } from "../../cosmo/batch";
-import type { ModelGivens } from "../../cosmo/model";
+import { type BatchPlan, type BatchProblem, engineServes, prepareBatch, rowStatus } from "../../cosmo/batch";
 import { closeModel } from "../../cosmo/solve";
 import { type BatchJob, chunkRows, control } from "./batchJob";
 import { FullRows } from "./fullRows";
@@ -9,17 +8,6 @@ import { HubbleSolver } from "./solveHubble";
 /** A slice of a chunk takes about so many milliseconds, so that a stop is heard and progress seen. */
 const sliceTime = 20;
 const firstSlice = 16;
-
-/** Whether the batch engine knows these shared givens: w by formula or table and published fits are the full computation's. */
-export function engineServes(shared: ModelGivens | undefined): boolean {
-  const { conventions, darkEnergy } = (shared ?? {}) as {
-    conventions?: Record<string, unknown>;
-    darkEnergy?: Record<string, unknown>;
-  };
-  const fits = ["lastScattering", "drag", "soundHorizon"];
-  if (fits.some((name) => (conventions?.[name] ?? "full") !== "full")) return false;
-  return Object.keys(darkEnergy ?? {}).every((name) => name === "w0" || name === "wa");
-}
 
 /** The part of a job that one thread does: chunk after chunk, each taken by nobody else, slice by slice. */
 export class JobRun {

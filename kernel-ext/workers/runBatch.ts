@@ -3,6 +3,7 @@ import {
   type BatchColumn,
   type BatchColumns,
   type BatchProblem,
+  engineServes,
   prepareBatch,
   type rowStatus,
   rowStatusNames,
@@ -14,7 +15,7 @@ import { later, nextTurn } from "../kernel/ownTimers";
 import { type BatchJob, chunkRows, control, type WorkerRequest } from "./batchJob";
 import { watchCellInterrupt } from "./cellInterrupt";
 import { fieldColumns } from "./givensOfRow";
-import { engineServes, JobRun } from "./jobRun";
+import { JobRun } from "./jobRun";
 import { asShared, sharedDoubles } from "./sharedMemory";
 import { workerPool } from "./workerPool";
 

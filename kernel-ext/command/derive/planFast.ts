@@ -1,8 +1,8 @@
-import { prepareBatch } from "../../../cosmo/batch";
+import { engineServes, prepareBatch } from "../../../cosmo/batch";
 import { CosmologyError } from "../../../cosmo/errors";
 import type { ModelGivens } from "../../../cosmo/model";
 import { closeModel } from "../../../cosmo/solve";
-import { engineServes, type WorkerRequest } from "../../workers";
+import type { WorkerRequest } from "../../workers";
 import type { ColumnPlan, GivenColumn } from "./columns";
 import { isDerived } from "./givenNames";
 import { nestGivens } from "./givensOfRow";
