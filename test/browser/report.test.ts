@@ -6,7 +6,7 @@ import type { Browser, Page } from "playwright-core";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { notebooksToHtml } from "../../kernel-ext/command/htmlReport";
 import { demoNames, root, runDemo } from "../notebooks-demo/demoNotebooks";
-import { axisTitles, type ChartPlaces, measureCharts } from "./chartPlaces";
+import { axisTitles, type ChartPlaces, measureCharts, smallPlots } from "./chartPlaces";
 import { launchChromium, screenshot, watchRequests, withoutChromium } from "./chromium";
 
 describe.skipIf(withoutChromium())("the report of the demo notebooks, opened without a network", () => {
@@ -46,11 +46,12 @@ describe.skipIf(withoutChromium())("the report of the demo notebooks, opened wit
       }))`,
     )) as { complete: boolean; width: number; height: number; shown: number; words: string; data: string }[];
     expect(pictures.length).toBe(demoNames.reduce((sum, name) => sum + axisTitles[name]!.length, 0));
-    for (const picture of pictures) {
+    const small = demoNames.flatMap((name) => axisTitles[name]!.map(() => smallPlots.has(name)));
+    for (const [index, picture] of pictures.entries()) {
       expect(picture.complete).toBe(true);
-      expect(picture.width).toBeGreaterThan(400);
-      expect(picture.height).toBeGreaterThan(250);
-      expect(picture.shown).toBeGreaterThan(400);
+      expect(picture.width).toBeGreaterThan(small[index] ? 180 : 400);
+      expect(picture.height).toBeGreaterThan(small[index] ? 120 : 250);
+      expect(picture.shown).toBeGreaterThan(small[index] ? 180 : 400);
       expect(picture.words).not.toBe("");
       expect(picture.data).toMatch(/^data:image\/svg\+xml/);
     }
@@ -64,10 +65,11 @@ describe.skipIf(withoutChromium())("the report of the demo notebooks, opened wit
     const charts = (await inspection.evaluate(measureCharts(".one > svg"))) as ChartPlaces[];
     const titles = demoNames.flatMap((name) => axisTitles[name]!);
     expect(charts.length).toBe(titles.length);
+    const small = demoNames.flatMap((name) => axisTitles[name]!.map(() => smallPlots.has(name)));
     for (const [index, chart] of charts.entries()) {
-      expect(chart.plotWidth).toBeGreaterThan(300);
-      expect(chart.plotHeight).toBeGreaterThan(150);
-      expect(chart.marks).toBeGreaterThan(5);
+      expect(chart.plotWidth).toBeGreaterThan(small[index] ? 60 : 300);
+      expect(chart.plotHeight).toBeGreaterThan(small[index] ? 40 : 150);
+      expect(chart.marks).toBeGreaterThan(small[index] ? 2 : 5);
       for (const title of titles[index]!) {
         expect(
           chart.texts.some((text) => text.includes(title)),

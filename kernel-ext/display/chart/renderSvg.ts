@@ -102,7 +102,9 @@ export async function renderSvg(
     }
     options.onWarning(warning);
   }
-  const name = createHash("sha256").update(JSON.stringify(spec)).digest("hex").slice(0, 8);
+  // Named after what is drawn, digits rounded: data that differ in the last bit give the same picture and the same names.
+  const drawn = settled(raw, "", wordsOf(spec));
+  const name = createHash("sha256").update(drawn).digest("hex").slice(0, 8);
   return settled(raw, name, wordsOf(spec));
 }
 
