@@ -1,11 +1,5 @@
 import { atoms } from "../constants";
-
-/**
- * a' and b' of the escape into hydrogen's continuum, as in recombination/heliumRates.ts (Kholupenko et al. 2007; Wong, Moss &
- * Scott 2008; memory). A test holds what is built here against the single model's rate.
- */
-const singlet = { amplitude: 0.36, exponent: 0.86 };
-const triplet = { amplitude: 0.66, exponent: 0.9 };
+import { singletLine, tripletLine } from "../recombination/heliumRates";
 
 const twoPhoton = atoms.heliumTwoPhotonRate;
 
@@ -23,8 +17,8 @@ const continuumEscapes = new Float64Array(2 * (highestRoot * pointsPerRoot + 3))
 for (let i = 0; i < continuumEscapes.length / 2; i++) {
   // The point before the first stands for the stencil alone.
   const g = (Math.max(i - 1, 0) / pointsPerRoot) ** 8;
-  continuumEscapes[2 * i] = 1 / (1 + singlet.amplitude * g ** singlet.exponent);
-  continuumEscapes[2 * i + 1] = 1 / (1 + triplet.amplitude * (tripletOverSinglet * g) ** triplet.exponent);
+  continuumEscapes[2 * i] = 1 / (1 + singletLine.amplitude * g ** singletLine.exponent);
+  continuumEscapes[2 * i + 1] = 1 / (1 + tripletLine.amplitude * (tripletOverSinglet * g) ** tripletLine.exponent);
 }
 
 /** (1 - e^-tau)/tau at equal steps in tau; beyond the end it is 1/tau to 1e-12. */

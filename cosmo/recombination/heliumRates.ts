@@ -25,7 +25,7 @@ export function heliumTripletRecombination(temperature: number): number {
 }
 
 /** A resonance line of He I whose photons hydrogen's continuum also absorbs. */
-interface HeliumLine {
+export interface HeliumLine {
   readonly rate: number;
   readonly level: number;
   readonly crossSection: number;
@@ -34,7 +34,8 @@ interface HeliumLine {
   readonly exponent: number;
 }
 
-const singletLine: HeliumLine = {
+/** 2 1P1-1 1S0. */
+export const singletLine: HeliumLine = {
   rate: atoms.heliumSingletRate,
   level: atoms.heliumSinglet2p,
   crossSection: atoms.hydrogenCrossSectionAtSinglet,
@@ -42,7 +43,8 @@ const singletLine: HeliumLine = {
   exponent: 0.86,
 };
 
-const tripletLine: HeliumLine = {
+/** 2 3P1-1 1S0. */
+export const tripletLine: HeliumLine = {
   rate: atoms.heliumTripletRate,
   level: atoms.heliumTriplet2p,
   crossSection: atoms.hydrogenCrossSectionAtTriplet,
