@@ -54,7 +54,7 @@ let pressureTable: PiecewiseChebyshev | undefined;
  *
  * @param y m c^2/(k T_nu), 0 or more.
  * Method: piecewise Chebyshev interpolation in ln y, built once a process from an exponentially convergent trapezoidal rule;
- * series at both ends. Accuracy: 2e-15 relative (measured against mpmath, 1e-14 stated).
+ * series at both ends. Accuracy: within 1.5e-14 of mpmath (tested).
  * Source: Fermi-Dirac statistics; see Komatsu et al. 2011, arXiv:1001.4538, section 3.3.
  * @example fermiDiracEnergy(0) // 1
  */

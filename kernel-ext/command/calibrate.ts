@@ -87,7 +87,7 @@ function main(): void {
     model: columnModel(),
     fittedTo: Object.fromEntries(fitted.map((name, i) => [name, printedTargets()[i]!])),
     relativeResiduals: Object.fromEntries(fitted.map((name, i) => [name, Number(residuals[i]!.toExponential(2))])),
-    // Rounded where a further digit would move z_* by less than 1e-10.
+    // Twelve digits; the last ones follow the noise of the histories and mean nothing physical.
     coefficients: coefficients.map((each) => Number(each.toPrecision(12))),
   };
   // Lists of numbers stand on one line, as the formatter of the house has them.

@@ -112,7 +112,7 @@ describe("uncertainty", () => {
     const linear = withErrors({ errors }).quantity("age").uncertainty!;
     const sampled = withErrors({ errors, method: "sampling", samples: 1024 }).quantity("age").uncertainty!;
     expect(sampled.method).toBe("sampling");
-    // 1024 quasi-random models: measured within 1%.
+    // 1024 quasi-random models: measured 3.0% above, 1.3% below.
     expect(Math.abs(sampled.upper / linear.upper - 1)).toBeLessThan(0.05);
     expect(Math.abs(sampled.lower / linear.lower - 1)).toBeLessThan(0.05);
     expect(withErrors({ errors, method: "sampling", samples: 1024 }).quantity("age").uncertainty).toEqual(sampled);
